@@ -1,0 +1,46 @@
+import presets from 'jest-preset-angular/presets/index.js';
+
+/** swc strips types; `npm run lint` checks them. */
+const swc = [
+  '@swc/jest',
+  {
+    jsc: {
+      target: 'es2022',
+      parser: { syntax: 'typescript', decorators: true },
+      transform: { legacyDecorator: true, decoratorMetadata: false, useDefineForClassFields: false },
+      keepClassNames: true,
+    },
+    module: { type: 'commonjs' },
+  },
+];
+
+/** One Jest project for each folder of `test/`, so that a suite can be run by its name: `npx jest --selectProjects unit`. */
+const nodeProject = (name) => ({
+  displayName: name,
+  rootDir: import.meta.dirname,
+  testMatch: [`<rootDir>/test/${name}/**/*.spec.ts`],
+  testEnvironment: 'node',
+  transform: { '^.+\\.ts$': swc },
+});
+
+export default {
+  projects: [
+    nodeProject('reference'),
+    nodeProject('unit'),
+    nodeProject('calibration'),
+    nodeProject('api'),
+    nodeProject('e2e'),
+    {
+      ...presets.createCjsPreset({ tsconfig: '<rootDir>/src/tsconfig.spec.json' }),
+      displayName: 'component',
+      rootDir: import.meta.dirname,
+      testMatch: ['<rootDir>/src/**/*.spec.ts'],
+      testEnvironment: 'jest-preset-angular/environments/jest-jsdom-env',
+      setupFilesAfterEnv: ['<rootDir>/src/testing/setup.ts'],
+      moduleNameMapper: {
+        'log-worker-factory$': '<rootDir>/src/testing/log-worker-stub.ts',
+        'plotly-loader$': '<rootDir>/src/testing/plotly-stub.ts',
+      },
+    },
+  ],
+};
