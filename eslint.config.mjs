@@ -35,7 +35,10 @@ export default defineConfig(
     processor: angular.processInlineTemplates,
     rules: {
       '@angular-eslint/component-selector': ['error', { type: 'element', prefix: 'tm', style: 'kebab-case' }],
-      '@angular-eslint/directive-selector': ['error', { type: 'attribute', prefix: 'tm', style: 'camelCase' }],
+      '@angular-eslint/directive-selector': [
+        'error',
+        { type: 'attribute', prefix: 'tm', style: 'camelCase' },
+      ],
       '@angular-eslint/prefer-on-push-component-change-detection': 'error',
     },
   },
@@ -45,16 +48,29 @@ export default defineConfig(
   },
   {
     files: ['**/*.spec.ts', 'test/**/*.ts'],
-    rules: { '@typescript-eslint/unbound-method': 'off', '@typescript-eslint/explicit-module-boundary-types': 'off' },
+    rules: {
+      '@typescript-eslint/unbound-method': 'off',
+      '@typescript-eslint/explicit-module-boundary-types': 'off',
+    },
   },
   {
     files: ['**/*.mjs', '**/*.cjs'],
     extends: [eslint.configs.recommended],
     languageOptions: {
       globals: {
-        process: 'readonly', console: 'readonly', setTimeout: 'readonly', clearTimeout: 'readonly',
-        setInterval: 'readonly', clearInterval: 'readonly', URL: 'readonly', Buffer: 'readonly', fetch: 'readonly',
-        performance: 'readonly', module: 'writable', require: 'readonly', AbortSignal: 'readonly',
+        process: 'readonly',
+        console: 'readonly',
+        setTimeout: 'readonly',
+        clearTimeout: 'readonly',
+        setInterval: 'readonly',
+        clearInterval: 'readonly',
+        URL: 'readonly',
+        Buffer: 'readonly',
+        fetch: 'readonly',
+        performance: 'readonly',
+        module: 'writable',
+        require: 'readonly',
+        AbortSignal: 'readonly',
       },
     },
   },

@@ -14,13 +14,20 @@ const swc = [
   },
 ];
 
+/** For suites that need PostgreSQL: a throw-away cluster for as long as Jest runs. */
+const database = {
+  globalSetup: '<rootDir>/test/support/hold-database.mjs',
+  globalTeardown: '<rootDir>/test/support/release-database.mjs',
+};
+
 /** One Jest project for each folder of `test/`, so that a suite can be run by its name: `npx jest --selectProjects unit`. */
-const nodeProject = (name) => ({
+const nodeProject = (name, more = {}) => ({
   displayName: name,
   rootDir: import.meta.dirname,
   testMatch: [`<rootDir>/test/${name}/**/*.spec.ts`],
   testEnvironment: 'node',
   transform: { '^.+\\.ts$': swc },
+  ...more,
 });
 
 export default {
@@ -28,8 +35,8 @@ export default {
     nodeProject('reference'),
     nodeProject('unit'),
     nodeProject('calibration'),
-    nodeProject('api'),
-    nodeProject('e2e'),
+    nodeProject('api', database),
+    nodeProject('e2e', database),
     {
       ...presets.createCjsPreset({ tsconfig: '<rootDir>/src/tsconfig.spec.json' }),
       displayName: 'component',

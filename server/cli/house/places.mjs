@@ -1,0 +1,24 @@
+/** Where things lie. Everything made while working goes to the git-ignored `.run/` and `dist/`. */
+import { createHash } from 'node:crypto';
+import { mkdirSync } from 'node:fs';
+import { dirname, join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+
+/** The clone's folder, by this file's own place: the caller's working directory plays no part. */
+export const root = join(dirname(fileURLToPath(import.meta.url)), '../../..');
+
+/** A path inside the clone. */
+export const inClone = (...parts) => join(root, ...parts);
+
+/** A folder under `.run/`, made when it is not there yet. */
+export function runFolder(...parts) {
+  const folder = inClone('.run', ...parts);
+  mkdirSync(folder, { recursive: true });
+  return folder;
+}
+
+/** Short name for one clone and one account: two clones on one machine never share a lock or a cluster. */
+export function cloneKey(text = '') {
+  const account = process.getuid?.() ?? 'any';
+  return createHash('sha256').update(`${root}\n${account}\n${text}`).digest('hex').slice(0, 16);
+}
