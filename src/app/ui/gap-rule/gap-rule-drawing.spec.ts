@@ -188,6 +188,21 @@ describe('marks of the gap rule', () => {
     expect(call('not judged', 'size open', 'no spread measured')).toBe('open V');
   });
 
+  it('keeps both values of a far bracket on the page', () => {
+    const far = { ...FIN_PAIR, gap: -41, marginOfError: 1, interval: [-42, -40] as const };
+    const { bracketEnds } = draw(far, PHONE);
+    expect(bracketEnds[0].x - 6.5 * bracketEnds[0].text.length).toBeGreaterThan(-16);
+  });
+
+  it('drops the word at a side where the needle stands', () => {
+    const far = { ...FIN_PAIR, gap: -9, marginOfError: 1, interval: [-10, -8] as const };
+    expect(draw(far, PHONE).sides.map(({ text }) => text)).toEqual(['higher →']);
+    expect(draw(FIN_PAIR, WIDE).sides.map(({ text }) => text)).toEqual([
+      '← Coated fins lower',
+      'Coated fins higher →',
+    ]);
+  });
+
   it('dashes the bracket only where the verdict is unresolved', () => {
     const within = {
       ...FIN_PAIR,

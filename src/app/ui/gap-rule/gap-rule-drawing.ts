@@ -80,6 +80,7 @@ export function drawGapRule(subject: GapRuleSubject, frame: GapRuleFrame): GapRu
   const judged = pair !== null && pair.flag !== 'not judged';
   const band =
     pair && hasNoise(pair) ? bandAt(scale, pair.marginOfError ?? 0, BAND_TOP + down, EDGE - BAND_TOP) : null;
+  const noNoise = pair && !hasNoise(pair) ? noNoiseLabel(gap ?? 0, zeroX, SIDE_Y + down) : null;
 
   return {
     width: frame.width,
@@ -102,8 +103,10 @@ export function drawGapRule(subject: GapRuleSubject, frame: GapRuleFrame): GapRu
           }
         : null,
     pole: down && gapX !== null ? poleAt(gapX, frame.width) : null,
-    sides: pair ? sideLabels(pair, frame.width, SIDE_Y + down) : [],
-    noNoise: pair && !hasNoise(pair) ? noNoiseLabel(pair.gap ?? 0, zeroX, SIDE_Y + down) : null,
+    sides: pair
+      ? sideLabels(pair, frame.width, SIDE_Y + down).filter((side) => isClear(side, gapX, noNoise))
+      : [],
+    noNoise,
   };
 }
 
@@ -165,6 +168,20 @@ function sideLabels(pair: GapRulePair, width: number, y: number): Label[] {
     { x: PADDING, y, anchor: 'start', text: `← ${named}lower` },
     { x: round(width - PADDING), y, anchor: 'end', text: `${named}higher →` },
   ];
+}
+
+/** Whether a side label stands clear of the needle and of the words on noise; the other side then says enough. */
+function isClear(side: Label, needleX: number | null, noNoise: Label | null): boolean {
+  const [from, to] = extentOf(side);
+  const needle = needleX !== null && needleX > from - 8 && needleX < to + 8;
+  const words = noNoise ? extentOf(noNoise) : null;
+  return !needle && !(words && words[0] < to + 8 && words[1] > from - 8);
+}
+
+/** Left and right of a label set at 12 px; the figure width is generous. */
+function extentOf({ x, anchor, text }: Label): [number, number] {
+  const width = text.length * 6.5;
+  return anchor === 'end' ? [x - width, x] : [x, x + width];
 }
 
 function noNoiseLabel(gap: number, zeroX: number, y: number): Label {

@@ -9,6 +9,7 @@ import { GapRulePair } from './gap-rule-pair';
   template: `<tm-gap-rule [pair]="pair()" [gapThatMatters]="0.5" [name]="name" flag
     ><h1>Headline</h1></tm-gap-rule
   >`,
+  changeDetection: ChangeDetectionStrategy.OnPush,
 })
 class Host {
   readonly pair = signal<GapRulePair | null>(FIN_PAIR);

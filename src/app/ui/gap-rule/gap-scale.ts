@@ -43,11 +43,25 @@ export function reachFor(largest: number, whole: number, atLeast: number): numbe
   return Math.max(Math.ceil(2 * (largest / whole + 0.2) - 1e-9) / 2, atLeast) * whole;
 }
 
+/** Room for the value at an end of the bracket, of which the padding and the page margin hold a part, px. */
+const END_VALUE = { room: 52, outside: PADDING + 12 };
+
 /** The scale of a big rule drawn `width` px wide. */
 export function gapScale(extent: Extent, unit: Unit, width: number): GapScale {
   const largest = largestMark(extent);
   const whole = wholeFor(largest, unit);
-  return scaleOver(reachFor(largest, whole, width < WIDE_FROM ? 1.5 : 2), whole, width, PADDING);
+  const farthestEnd = extent.gap === null ? 0 : Math.abs(extent.gap) + (extent.marginOfError ?? 0);
+  let reach = reachFor(largest, whole, width < WIDE_FROM ? 1.5 : 2);
+  let scale = scaleOver(reach, whole, width, PADDING);
+  // A far gap leaves little room beyond it, and its value would run off the page.
+  while (
+    scale.x(reach) - scale.x(farthestEnd) + END_VALUE.outside < END_VALUE.room &&
+    width > 4 * END_VALUE.room
+  ) {
+    reach += whole / 2;
+    scale = scaleOver(reach, whole, width, PADDING);
+  }
+  return scale;
 }
 
 /** A scale of −reach to +reach over `width` px less the padding on both sides. */
