@@ -36,6 +36,7 @@ export const pairRowSchema = z.object({
 export type PairRow = z.infer<typeof pairRowSchema>;
 
 export const reRunResultSchema = z.enum(['identical', 'differs', "can't re-run"]);
+export type ReRunResult = z.infer<typeof reRunResultSchema>;
 
 export const lastReRunSchema = z.object({ at: instantSchema, by: z.string(), result: reRunResultSchema });
 
