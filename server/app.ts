@@ -4,12 +4,14 @@ import { z } from 'zod';
 import { peopleRoutes } from './accounts/people-routes';
 import { sessionRoutes } from './accounts/session-routes';
 import { ledgerRoutes } from './audit/ledger-routes';
+import { benchRoutes } from './benches/bench-routes';
 import type { Dependencies } from './dependencies';
 import { problemHandler, unknownApiPath } from './http/problem';
 import { mount, route, type Route } from './http/route';
 import { neverStored, ownPagesOnly, requestId, securityHeaders } from './http/security';
 import { webFiles } from './http/web-files';
 import { mailRoutes } from './mail/mail-routes';
+import { studyRoutes } from './studies/study-routes';
 import { thresholdsRoutes } from './thresholds/thresholds-routes';
 
 const healthRoutes = (): Route[] => [
@@ -29,6 +31,8 @@ export const apiRoutes = (dependencies: Dependencies): Route[] => [
   ...peopleRoutes(dependencies),
   ...mailRoutes(dependencies),
   ...thresholdsRoutes(dependencies),
+  ...benchRoutes(dependencies),
+  ...studyRoutes(dependencies),
   ...ledgerRoutes(dependencies),
 ];
 
