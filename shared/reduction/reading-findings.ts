@@ -1,0 +1,85 @@
+import { ColumnMap, RunFinding } from '../contracts/run-summary';
+import { Collector, OddRow } from './collector';
+import { columnName } from './problems';
+import { TimeAxis } from './time-axis';
+import { count, quoted } from './words';
+
+const rowList = (rows: readonly number[]): string =>
+  rows.length === 1 ? `row ${rows[0]}` : `rows ${rows.slice(0, -1).join(', ')} and ${rows[rows.length - 1]}`;
+
+/** Tells of lines that are no readings: a header again, totals at the end, rows cut short. */
+function oddRowFindings(collector: Collector): RunFinding[] {
+  const findings: RunFinding[] = [];
+  const total = collector.rows.length;
+  const note = (code: string, level: RunFinding['level'], text: string) =>
+    findings.push({ code, level, text, atSeconds: null });
+  const headers = collector.odd.filter((odd) => odd.kind === 'header again');
+  if (headers.length > 0) {
+    note(
+      'header-again',
+      'note',
+      `The header stands again in ${rowList(headers.slice(0, 5).map((odd) => odd.row))}; left out.`,
+    );
+  }
+  const rest = collector.odd.filter((odd) => odd.kind !== 'header again');
+  const atEnd = rest.filter((odd) => odd.after === total);
+  const inside = rest.filter((odd) => odd.after < total);
+  const cutShort = atEnd.length === 1 && atEnd[0].kind === 'too short' ? atEnd[0] : null;
+  if (cutShort) {
+    note(
+      'last-row-cut',
+      'note',
+      `The last row, ${cutShort.row}, is cut short; that one reading is left out.`,
+    );
+  } else if (atEnd.length > 0) {
+    note(
+      'end-block',
+      'note',
+      `${count(atEnd.length, 'row')} after the last reading, from row ${atEnd[0].row} (${quoted(atEnd[0].text)}), ${atEnd.length === 1 ? 'is not a reading' : 'are not readings'}; left out.`,
+    );
+  }
+  if (inside.length > 0)
+    findings.push(insideFinding(inside, collector.oddCount - headers.length - atEnd.length));
+  return findings;
+}
+
+function insideFinding(inside: readonly OddRow[], total: number): RunFinding {
+  const [first] = inside;
+  const why = {
+    'no time': 'has no time that can be read',
+    'too short': 'has too few cells',
+    'too long': 'has more cells than the header',
+    'header again': 'repeats the header',
+  }[first.kind];
+  return {
+    code: 'rows-skipped',
+    level: 'caution',
+    text: `${count(total, 'row')} among the readings skipped; the first, row ${first.row} (${quoted(first.text)}), ${why}.`,
+    atSeconds: null,
+  };
+}
+
+/** What reading skipped or noticed, as findings: nothing is left out silently. */
+export function readingFindings(
+  collector: Collector,
+  map: ColumnMap,
+  axis: TimeAxis,
+  rows: ArrayLike<number>,
+): RunFinding[] {
+  const findings = oddRowFindings(collector);
+  const used = new Set<number | null>([map.heatSource, map.ambient, map.watts, map.fanSpeed]);
+  for (const kept of collector.kept) {
+    if (!used.has(kept.column.position) || kept.badCount === 0) continue;
+    const name = columnName(kept.column.header, kept.column.position);
+    const [first] = kept.bad;
+    let at: number | null = null;
+    for (let i = 0; i < rows.length && at === null; i += 1) if (rows[i] === first.row) at = axis.seconds[i];
+    findings.push({
+      code: 'bad-cells',
+      level: 'caution',
+      text: `${count(kept.badCount, 'cell')} of ${name} ${kept.badCount === 1 ? 'is not a reading' : 'are not readings'} and ${kept.badCount === 1 ? 'is' : 'are'} skipped; the first is ${quoted(first.text)} in row ${first.row}.`,
+      atSeconds: at,
+    });
+  }
+  return findings;
+}
