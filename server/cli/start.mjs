@@ -56,7 +56,10 @@ function announce({ address, signIns }) {
   progress.say('Stop with Ctrl-C.');
 }
 
-whenToStop(end);
+whenToStop((code) => {
+  progress.close('Stopping.');
+  return end(code);
+});
 try {
   checkNode(progress);
   progress.say('Tenthmark');

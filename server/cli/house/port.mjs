@@ -13,6 +13,9 @@ function probe(port, host) {
   });
 }
 
+/** True when somebody listens on a port of this machine. */
+export const isTaken = async (port) => (await probe(port, '127.0.0.1')) === null;
+
 /** A port the system says is free. */
 export const anyFreePort = () => probe(0, '127.0.0.1');
 

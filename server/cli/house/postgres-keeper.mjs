@@ -47,7 +47,7 @@ function portChooser(home) {
 async function up() {
   const account = databaseAccount();
   const cluster = { home: clusterHome(name), account, throwAway };
-  const already = runningServer(cluster.home);
+  const already = await runningServer(cluster.home);
   if (already) return { ...cluster, ...already };
   if (throwAway) rmSync(join(cluster.home, 'data'), { recursive: true, force: true });
   makeHome(cluster.home, account);
@@ -59,7 +59,7 @@ async function up() {
 
 /** Brings a server that was killed back on the same port, so that its clients only have to connect again. */
 async function watch() {
-  if (server && !stopping && !isAlive(server.pid)) {
+  if (server && !stopping && !isAlive(server)) {
     const { port } = server;
     reviving = startServer(server, () => port);
     server = { ...server, ...(await reviving) };
@@ -72,7 +72,7 @@ async function end() {
   stopping = true;
   const revived = await reviving?.catch(() => null);
   if (revived) server = { ...server, ...revived };
-  if (server) await stopServer(server.pid);
+  if (server) await stopServer(server);
   if (server && throwAway) rmSync(join(server.home, 'data'), { recursive: true, force: true });
   process.exit(0);
 }

@@ -7,12 +7,14 @@ import {
   readFileSync,
   readdirSync,
   readlinkSync,
+  realpathSync,
   renameSync,
   rmSync,
   statSync,
 } from 'node:fs';
 import { join } from 'node:path';
 import { setTimeout as pause } from 'node:timers/promises';
+import { isTaken } from './port.mjs';
 import { password, programsFor } from './postgres-home.mjs';
 import { run } from './processes.mjs';
 import { Trouble } from './trouble.mjs';
@@ -71,22 +73,35 @@ function nameOf(pid) {
   }
 }
 
-/** True when any process still works in the data folder (a killed server's children outlive it for a moment). */
-function inUse(data) {
-  return readdirSync('/proc').some((pid) => {
-    if (!/^\d+$/.test(pid)) return false;
-    try {
-      return readlinkSync(`/proc/${pid}/cwd`) === data;
-    } catch {
-      return false;
-    }
-  });
+/** True for a process that has ended and only waits for its parent to notice. */
+function hasEnded(pid) {
+  try {
+    return /\) Z /.test(readFileSync(`/proc/${pid}/stat`, 'utf8'));
+  } catch {
+    return true;
+  }
 }
 
+/** True when process `pid` works in the folder `data`, as a server does in its own; false for one that has ended. */
+function worksIn(pid, data) {
+  try {
+    return readlinkSync(`/proc/${pid}/cwd`) === realpathSync(data);
+  } catch (error) {
+    // In a container even root may not look into another account's process; then its name has to do.
+    return error.code === 'EACCES' && nameOf(pid) === 'postgres' && !hasEnded(pid);
+  }
+}
+
+/** True when any process still works in the data folder (a killed server's children outlive it for a moment). */
+const inUse = (data) => readdirSync('/proc').some((pid) => /^\d+$/.test(pid) && worksIn(pid, data));
+
 /** The server already running on this folder (its keeper was killed), or null. */
-export function runningServer(home) {
-  const [pid, , , port, , , , status] = pidFile(join(home, 'data'));
-  if (!pid || status?.trim() !== 'ready' || nameOf(pid) !== 'postgres') return null;
+export async function runningServer(home) {
+  const data = join(home, 'data');
+  const [pid, , , port, , , , status] = pidFile(data);
+  // The file outlives a killed server, and its process id may since name another program: ask where that one works.
+  if (!pid || status?.trim() !== 'ready' || !worksIn(pid, data)) return null;
+  if (!(await isTaken(Number(port)))) return null;
   return { pid: Number(pid), port: Number(port) };
 }
 
@@ -150,21 +165,14 @@ export async function startServer(cluster, freePort) {
   }
 }
 
-/** True while the server's process lives; one that only waits for its parent to notice its end does not count. */
-export function isAlive(pid) {
-  if (nameOf(pid) !== 'postgres') return false;
-  try {
-    return !/\) Z /.test(readFileSync(`/proc/${pid}/stat`, 'utf8'));
-  } catch {
-    return false;
-  }
-}
+/** True while the server lives. */
+export const isAlive = ({ pid, home }) => worksIn(pid, join(home, 'data'));
 
 /** Fast shutdown: open transactions are rolled back, data is written, clients are cut off. */
-export async function stopServer(pid) {
+export async function stopServer(server) {
   // Not SIGTERM: that is the smart shutdown, which waits for clients that may never leave.
-  if (isAlive(pid)) process.kill(pid, 'SIGINT');
-  for (const until = Date.now() + 30_000; isAlive(pid); await pause(20)) {
-    if (Date.now() > until) process.kill(pid, 'SIGQUIT');
+  if (isAlive(server)) process.kill(server.pid, 'SIGINT');
+  for (const until = Date.now() + 30_000; isAlive(server); await pause(20)) {
+    if (Date.now() > until) process.kill(server.pid, 'SIGQUIT');
   }
 }

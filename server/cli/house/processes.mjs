@@ -6,9 +6,13 @@ import { spawn } from 'node:child_process';
 
 const running = new Set();
 
-/** Starts a child that `stopChildren` will stop. */
-export function start(command, args, options = {}) {
+/**
+ * Starts a child that `stopChildren` will stop.
+ * @param options.patienceMs how long it may take to stop when asked; installs and builds hold nothing worth waiting for
+ */
+export function start(command, args, { patienceMs = 700, ...options } = {}) {
   const child = spawn(command, args, { detached: true, stdio: 'ignore', ...options });
+  child.patienceMs = patienceMs;
   running.add(child);
   child.once('exit', () => running.delete(child));
   child.once('error', () => running.delete(child));
@@ -46,11 +50,11 @@ function signalGroup(child, signal) {
   }
 }
 
-/** Resolves once the child has gone; asks first, insists after `patienceMs`. */
-export function stop(child, patienceMs = 8000) {
+/** Resolves once the child has gone; asks first, insists when its patience is over. */
+export function stop(child) {
   if (child.exitCode !== null || child.signalCode !== null) return Promise.resolve();
   return new Promise((resolve) => {
-    const insist = setTimeout(() => signalGroup(child, 'SIGKILL'), patienceMs);
+    const insist = setTimeout(() => signalGroup(child, 'SIGKILL'), child.patienceMs);
     child.ref();
     child.once('exit', () => {
       clearTimeout(insist);

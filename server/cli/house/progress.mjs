@@ -15,7 +15,9 @@ export function createProgress(stream = process.stdout) {
   const terminal = Boolean(stream?.isTTY);
   let timer = null;
 
-  const write = (text) => stream?.write(text);
+  let quiet = false;
+
+  const write = (text) => !quiet && stream?.write(text);
   const clear = () => terminal && write('\r\u001b[K');
 
   function draw() {
@@ -53,6 +55,12 @@ export function createProgress(stream = process.stdout) {
     say(text) {
       clear();
       write(`${text}\n`);
+    },
+    /** Says a last word; steps cut short after it are nobody's news. */
+    close(text) {
+      clear();
+      write(`${text}\n`);
+      quiet = true;
     },
     /** Shows `label` while `work` runs; returns what it returns. */
     async step(label, work) {

@@ -26,6 +26,8 @@ function launch(environment, port, onProgress) {
     cwd: root,
     env: { ...environment, PORT: String(port) },
     stdio: ['ignore', 'inherit', 'inherit', 'ipc'],
+    // Requests being answered are finished first.
+    patienceMs: 8000,
   });
   const ready = new Promise((resolve, reject) => {
     child.on('message', (message) => {
