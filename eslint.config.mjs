@@ -15,6 +15,8 @@ export default defineConfig(
       '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_', varsIgnorePattern: '^_' }],
       '@typescript-eslint/restrict-template-expressions': ['error', { allowNumber: true }],
       eqeqeq: 'error',
+      'max-lines': ['error', 350],
+      'no-warning-comments': ['error', { terms: ['todo', 'fixme', 'xxx'] }],
     },
   },
   {
@@ -49,6 +51,14 @@ export default defineConfig(
   {
     files: ['**/*.spec.ts', 'test/**/*.ts'],
     rules: {
+      // A test left out, or left alone, says nothing about the rest.
+      'no-restricted-properties': [
+        'error',
+        ...['it', 'test', 'describe'].flatMap((object) =>
+          ['only', 'skip', 'todo'].map((property) => ({ object, property, message: 'Every test runs.' })),
+        ),
+      ],
+      'no-restricted-globals': ['error', 'fit', 'fdescribe', 'xit', 'xdescribe', 'xtest'],
       '@typescript-eslint/unbound-method': 'off',
       '@typescript-eslint/explicit-module-boundary-types': 'off',
     },

@@ -12,7 +12,7 @@ export function which(program) {
 }
 
 /** True when this account may install Debian packages. */
-export const mayInstall = () => process.getuid?.() === 0 && which('apt-get') !== null;
+const mayInstall = () => process.getuid?.() === 0 && which('apt-get') !== null;
 
 /**
  * Runs apt-get to its end even if we are stopped meanwhile: a package manager cut short leaves the machine

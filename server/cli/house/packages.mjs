@@ -40,7 +40,7 @@ function installedByHand() {
 }
 
 /** True when nothing needs installing. */
-export function packagesAreFresh() {
+function packagesAreFresh() {
   if (!existsSync(folder)) return false;
   // A linked node_modules belongs to whoever made the link: installing through it would change another clone.
   if (lstatSync(folder).isSymbolicLink()) return true;

@@ -7,7 +7,7 @@
  * Says one JSON line to whoever connects: {"port"} once the server is up, or {"trouble"}. It never says the password:
  * any account may connect to an abstract socket, while the password's file is for its owner.
  *
- * Usage: postgres-keeper.mjs pg|pg-test
+ * Usage: postgres-keeper.mjs NAME, where NAME is `pg` or begins with `pg-test`
  */
 import { existsSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { createServer } from 'node:net';
@@ -19,7 +19,7 @@ import { isAlive, makeCluster, runningServer, startServer, stopServer } from './
 import { inWords } from './trouble.mjs';
 
 const name = process.argv[2];
-const throwAway = name === 'pg-test';
+const throwAway = name.startsWith('pg-test');
 /** How long the server outlives its last holder: nothing, but for a holder that connects as another leaves. */
 const LINGER_MS = 50;
 const CHECK_MS = 500;

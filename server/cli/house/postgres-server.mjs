@@ -19,7 +19,7 @@ import { password, programsFor } from './postgres-home.mjs';
 import { run } from './processes.mjs';
 import { Trouble } from './trouble.mjs';
 
-export const superuser = 'tenthmark';
+const superuser = 'tenthmark';
 const LOG_LIMIT_BYTES = 5_000_000;
 /** Recovering a large cluster after a crash can take minutes; it is alive and says "starting" all the while. */
 const READY_WITHIN_MS = 300_000;

@@ -91,7 +91,8 @@ async function reach(name) {
 
 /**
  * Gets the cluster `name`, starting it when nobody has yet.
- * @param name `pg`: the working data; `pg-test`: a cluster without durability, emptied when nobody holds it
+ * @param name `pg`: the working data; any name that begins with `pg-test`: a cluster without durability, emptied
+ *   when nobody holds it
  * @returns `url` of its database with full rights, and `release()`, which resolves once the server has stopped
  *   or was left to others who still use it
  */

@@ -27,7 +27,7 @@ export function createProgress(stream = process.stdout) {
         (step) => `${step.label} ${Math.floor((now - step.from) / 1000)} s`,
       );
       clear();
-      write(`  ${shown.join(' · ')}`.slice(0, (stream.columns ?? 80) - 1));
+      write(`  ${shown.join(' · ')}`.slice(0, (stream.columns || 80) - 1));
       return;
     }
     for (const step of running.values()) {
