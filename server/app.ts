@@ -11,6 +11,7 @@ import { mount, route, type Route } from './http/route';
 import { neverStored, ownPagesOnly, requestId, securityHeaders } from './http/security';
 import { webFiles } from './http/web-files';
 import { mailRoutes } from './mail/mail-routes';
+import { runRoutes } from './runs/run-routes';
 import { studyRoutes } from './studies/study-routes';
 import { thresholdsRoutes } from './thresholds/thresholds-routes';
 
@@ -33,6 +34,7 @@ export const apiRoutes = (dependencies: Dependencies): Route[] => [
   ...thresholdsRoutes(dependencies),
   ...benchRoutes(dependencies),
   ...studyRoutes(dependencies),
+  ...runRoutes(dependencies),
   ...ledgerRoutes(dependencies),
 ];
 

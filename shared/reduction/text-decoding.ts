@@ -63,7 +63,7 @@ export function sniff(bytes: Uint8Array): Sniffed {
 export class TextStream {
   private held: Uint8Array[] = [];
   private heldBytes = 0;
-  private decoder: TextDecoder | null = null;
+  private decoder: InstanceType<typeof TextDecoder> | null = null;
   /** Encoding once known. */
   encoding: string | null = null;
   /** What the file is instead of text, once known. */
