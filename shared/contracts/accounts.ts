@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import * as z from 'zod';
 import { idSchema, instantSchema, nameSchema, roleSchema } from './common';
 
 export const emailSchema = z

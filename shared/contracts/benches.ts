@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import * as z from 'zod';
 import { idSchema, instantSchema, nameSchema } from './common';
 
 export const benchSchema = z.object({

@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import * as z from 'zod';
 
 /** Identifier of a stored thing. */
 export const idSchema = z.uuid();

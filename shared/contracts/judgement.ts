@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import * as z from 'zod';
 import { metricSchema } from './common';
 import { findingLevelSchema } from './run-summary';
 

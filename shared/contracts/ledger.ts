@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import * as z from 'zod';
 import { digestSchema, idSchema, instantSchema, pageOf } from './common';
 
 /** One entry of a team's chained record. `digest` covers the canonical JSON (RFC 8785) of the entry and `previous`. */

@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import * as z from 'zod';
 
 /** How much a finding weighs: a note changes nothing, a caution weakens the verdict, a stop blocks sign-off. */
 export const findingLevelSchema = z.enum(['note', 'caution', 'stop']);
