@@ -22,14 +22,18 @@ export interface DrawnWidth {
 /**
  * The width a drawing gets, measured as the page changes and fixed on paper. Call while a component is made.
  * @param unmeasured px to draw at until the first measurement
+ * @param paper px to draw at on paper; null keeps the measured width, for drawings in a cell of a table
  */
-export function drawnWidth(unmeasured: number): DrawnWidth {
+export function drawnWidth(unmeasured: number, paper: number | null = PAPER_WIDTH): DrawnWidth {
   const host = inject<ElementRef<HTMLElement>>(ElementRef).nativeElement;
   const changes = inject(ChangeDetectorRef);
   const view = inject(DOCUMENT).defaultView;
   const measured = signal(unmeasured);
   const onPaper = signal(false);
-  const result: DrawnWidth = { width: computed(() => (onPaper() ? PAPER_WIDTH : measured())), onPaper };
+  const result: DrawnWidth = {
+    width: computed(() => (onPaper() && paper !== null ? paper : measured())),
+    onPaper,
+  };
   if (!view) return result;
 
   const stop = new AbortController();

@@ -35,7 +35,7 @@ export class GapScaleHead {
   readonly domain = input.required<number>();
   readonly unit = input<Unit>('°C');
 
-  private readonly drawn = drawnWidth(420);
+  private readonly drawn = drawnWidth(420, null);
   protected readonly width = computed(() => Math.min(this.drawn.width(), 460));
   protected readonly numerals = computed(() => {
     const whole = 10 ** Math.floor(Math.log10(this.domain()) + 1e-9);

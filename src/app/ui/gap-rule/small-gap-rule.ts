@@ -21,7 +21,7 @@ export class SmallGapRule {
   readonly unit = input<Unit>('°C');
 
   protected readonly id = `small-rule-${++rulesMade}`;
-  private readonly drawn = drawnWidth(420);
+  private readonly drawn = drawnWidth(420, null);
   protected readonly rule = computed(() =>
     drawSmallGapRule(this.pair(), this.domain(), this.unit(), {
       width: Math.min(this.drawn.width(), WIDEST),
@@ -31,5 +31,5 @@ export class SmallGapRule {
   protected readonly label = computed(() => smallRuleLabel(this.pair(), this.unit()));
 }
 
-/** A list's rules never grow beyond this, px, on paper too. */
+/** A list's rules never grow beyond this, px. */
 const WIDEST = 460;

@@ -1,0 +1,3 @@
+import { Routes } from '@angular/router';
+const routes: Routes = [];
+export default routes;
