@@ -14,6 +14,8 @@ import { mailRoutes } from './mail/mail-routes';
 import { runRoutes } from './runs/run-routes';
 import { studyRoutes } from './studies/study-routes';
 import { thresholdsRoutes } from './thresholds/thresholds-routes';
+import { verdictRoutes } from './verdicts/verdict-routes';
+import { waitingRoutes } from './waiting/waiting-routes';
 
 const healthRoutes = (): Route[] => [
   route({
@@ -35,6 +37,8 @@ export const apiRoutes = (dependencies: Dependencies): Route[] => [
   ...benchRoutes(dependencies),
   ...studyRoutes(dependencies),
   ...runRoutes(dependencies),
+  ...verdictRoutes(dependencies),
+  ...waitingRoutes(dependencies),
   ...ledgerRoutes(dependencies),
 ];
 

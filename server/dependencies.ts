@@ -2,6 +2,9 @@ import type { DataSource } from 'typeorm';
 import type { Config } from './config';
 import type { Post } from './mail/mail-service';
 
+/** The database as services use it; inside a transaction, its manager can stand for it. */
+export type Database = Pick<DataSource, 'manager' | 'transaction' | 'query'>;
+
 /** How often one may try before waiting. */
 export interface Limits {
   readonly windowMilliseconds: number;
@@ -14,7 +17,7 @@ export interface Limits {
 /** Everything the application needs from outside; tests hand in their own. */
 export interface Dependencies {
   readonly config: Config;
-  readonly db: DataSource;
+  readonly db: Database;
   readonly clock: () => Date;
   readonly post: Post;
   /** bcrypt's cost: doubling the work for each step up. */

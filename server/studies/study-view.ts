@@ -58,11 +58,9 @@ async function complete(
   verdicts: readonly VerdictRow[],
 ): Promise<Study[]> {
   const ids = studies.map(({ id }) => id);
-  const [conditions, coolers, counts] = await Promise.all([
-    conditionsOf(manager, ids),
-    coolersOf(manager, ids),
-    runCounts(manager, ids),
-  ]);
+  const conditions = await conditionsOf(manager, ids);
+  const coolers = await coolersOf(manager, ids);
+  const counts = await runCounts(manager, ids);
   return studies.map((study) => ({
     id: study.id,
     name: study.name,
