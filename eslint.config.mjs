@@ -14,6 +14,8 @@ export default defineConfig(
       '@typescript-eslint/explicit-module-boundary-types': 'error',
       '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_', varsIgnorePattern: '^_' }],
       '@typescript-eslint/restrict-template-expressions': ['error', { allowNumber: true }],
+      // Static methods, like a form library's validators, use no `this`.
+      '@typescript-eslint/unbound-method': ['error', { ignoreStatic: true }],
       eqeqeq: 'error',
       'max-lines': ['error', 350],
       'no-warning-comments': ['error', { terms: ['todo', 'fixme', 'xxx'] }],

@@ -99,6 +99,8 @@ async function runSuites(wanted) {
     return !reason;
   });
   database = tools.database;
+  const withoutPython = tools.missing.get('notebooks');
+  if (withoutPython) suites.push(cannotRun('notebooks', withoutPython));
   if (runnable.some((name) => alone.includes(name))) {
     try {
       await ensureBuilds(progress);
@@ -115,7 +117,8 @@ async function runSuites(wanted) {
   }
   if (runnable.includes('lint')) suites.push(await lintSuite());
   const together = runnable.filter((name) => quick.includes(name));
-  suites.push(...(await runJest(together, ['--maxWorkers=2'], tools.environment, progress)));
+  const options = ['--maxWorkers=2', ...(withoutPython ? ['--testPathIgnorePatterns=notebook'] : [])];
+  suites.push(...(await runJest(together, options, tools.environment, progress)));
   const after = runnable.filter((name) => alone.includes(name));
   suites.push(...(await runJest(after, ['--runInBand'], tools.environment, progress)));
   return summary(suites);

@@ -1,10 +1,14 @@
 /** The programs the suites need beside Node.js: PostgreSQL, Chromium, and a Python that has SciPy. */
 import { spawnSync } from 'node:child_process';
+import { existsSync } from 'node:fs';
 import { ensureDebian, which } from '../../server/cli/house/debian.mjs';
 import { ensurePostgres, holdPostgres } from '../../server/cli/house/postgres.mjs';
 import { inWords } from '../../server/cli/house/trouble.mjs';
 
-const findChromium = () => process.env.CHROMIUM_PATH ?? which('chromium') ?? which('chromium-browser');
+const findChromium = () =>
+  [process.env.CHROMIUM_PATH, which('chromium'), which('chromium-browser')].find(
+    (file) => file && existsSync(file),
+  ) ?? null;
 
 const hasScipy = (python) =>
   spawnSync(python, ['-c', 'import scipy.stats'], { stdio: 'ignore' }).status === 0;
@@ -22,7 +26,7 @@ const scipy = {
   instead: 'set PYTHON to an interpreter that has it',
 };
 
-/** Which suites need which tool. */
+/** Which suites need which tool. Of the unit tests only those of the notebooks need Python: see `notebooks` below. */
 const needs = {
   database: ['api', 'e2e'],
   chromium: ['e2e'],
@@ -31,7 +35,8 @@ const needs = {
 
 /**
  * Finds, installs and starts what the wanted suites need.
- * @returns `environment` for the tests, `database` to release afterwards, and `missing`: suite to reason
+ * @returns `environment` for the tests, `database` to release afterwards, and `missing`: suite to reason, where
+ *   `notebooks` stands for the unit specs with that word in their path
  */
 export async function prepareTools(wanted, progress) {
   const environment = {};
@@ -45,7 +50,7 @@ export async function prepareTools(wanted, progress) {
     try {
       await work();
     } catch (error) {
-      for (const suite of suites) missing.set(suite, inWords(error));
+      for (const suite of tool === 'python' ? ['notebooks'] : suites) missing.set(suite, inWords(error));
     }
   }
   await Promise.all([
