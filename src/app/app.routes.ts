@@ -1,5 +1,5 @@
 import { Routes } from '@angular/router';
-import { requireNoSession, requireSession } from './core/session-guard';
+import { requireNoSession, requireRole, requireSession } from './core/session-guard';
 
 /** Every address of the application. Each feature loads when it is first opened. */
 export const routes: Routes = [
@@ -32,6 +32,12 @@ export const routes: Routes = [
         loadComponent: () => import('./studies/waiting/waiting').then((m) => m.WaitingPage),
       },
       { path: 'studies', loadChildren: () => import('./studies/studies.routes') },
+      { path: 'verdicts', loadChildren: () => import('./verdicts/verdicts.routes') },
+      {
+        path: 'audit',
+        canActivate: [requireRole('lead', 'auditor', 'administrator')],
+        loadChildren: () => import('./audit/audit.routes'),
+      },
       {
         path: 'account',
         title: 'Account',

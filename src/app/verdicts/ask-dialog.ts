@@ -2,7 +2,7 @@ import { DIALOG_DATA, DialogRef } from '@angular/cdk/dialog';
 import { ChangeDetectionStrategy, Component, inject, signal } from '@angular/core';
 import { NonNullableFormBuilder, ReactiveFormsModule, ValidatorFn, Validators } from '@angular/forms';
 import { Observable } from 'rxjs';
-import { problemText } from './problem-text';
+import { ApiProblem } from '../core/api-problem';
 
 export interface Answer {
   readonly comment: string | null;
@@ -61,7 +61,7 @@ export class AskDialog<Result> {
       next: (result) => this.ref.close(result),
       error: (error: unknown) => {
         this.working.set(false);
-        this.problem.set(problemText(error));
+        this.problem.set(ApiProblem.from(error).words);
       },
     });
   }

@@ -1,13 +1,13 @@
 import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
 import { Verdict } from '../../../shared/contracts';
-import { MomentPipe } from '../ui/quantity/moment-format';
+import { MomentPipe } from '../ui/moment/moment-pipe';
 
 /** What became of the verdict, newest first, as the ledger has it. */
 @Component({
   selector: 'tm-life-steps',
   imports: [MomentPipe],
   template: `
-    <h2 class="sec">Life of this verdict <small>as the ledger has it, newest first</small></h2>
+    <h2 class="section-head">Life of this verdict <small>as the ledger has it, newest first</small></h2>
     <ol>
       @for (step of newestFirst(); track $index) {
         <li>

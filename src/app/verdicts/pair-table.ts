@@ -17,12 +17,14 @@ interface Cell {
   selector: 'tm-pair-table',
   imports: [NeedleMark, RouterLink],
   template: `
-    <h2 class="sec">Every pair <small>gap ÷ margin of error; a solid needle is outside noise</small></h2>
-    <div class="scroll">
+    <h2 class="section-head">
+      Every pair <small>gap ÷ margin of error; a solid needle is outside noise</small>
+    </h2>
+    <div class="scroll-sideways">
       <table>
         <thead>
           <tr>
-            <th scope="col"><span class="unseen">compared</span></th>
+            <th scope="col"><span class="visually-hidden">compared</span></th>
             @for (name of columns(); track name) {
               <th scope="col">{{ name }}</th>
             }

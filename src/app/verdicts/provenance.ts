@@ -1,6 +1,6 @@
 import { ChangeDetectionStrategy, Component, computed, input, output } from '@angular/core';
 import { Verdict } from '../../../shared/contracts';
-import { DayPipe, MomentPipe } from '../ui/quantity/moment-format';
+import { DayPipe, MomentPipe } from '../ui/moment/moment-pipe';
 import { decimalsFor, formatLevel, formatNumber, withUnit } from '../ui/quantity/quantity-format';
 import { plural, shortDigest } from './verdict-words';
 import { exportAddress, logAddress } from './verdicts-client';

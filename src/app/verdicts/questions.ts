@@ -1,5 +1,5 @@
 import { Verdict, VerdictRow } from '../../../shared/contracts';
-import { formatMoment } from '../ui/quantity/moment-format';
+import { formatMoment } from '../ui/moment/moment-pipe';
 import { Question } from './ask-dialog';
 import { Act } from './sign-off-strip';
 import { VerdictsClient } from './verdicts-client';

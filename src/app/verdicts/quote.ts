@@ -6,8 +6,8 @@ import { ChangeDetectionStrategy, Component, DOCUMENT, inject, input, signal } f
   template: `
     <p #sentence class="sentence">“{{ text() }}”</p>
     <div class="copy">
-      <button type="button" class="btn small" (click)="copy(sentence)">Copy sentence</button>
-      <span class="said" aria-live="polite">{{ said() }}</span>
+      <button type="button" class="button small" (click)="copy(sentence)">Copy sentence</button>
+      <span class="caption" aria-live="polite">{{ said() }}</span>
     </div>
   `,
   styleUrl: './quote.scss',

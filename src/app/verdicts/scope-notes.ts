@@ -7,7 +7,7 @@ import { scopeInWords } from './verdict-words';
 @Component({
   selector: 'tm-scope-notes',
   template: `
-    <h2 class="sec">What this verdict covers</h2>
+    <h2 class="section-head">What this verdict covers</h2>
     <p>{{ covers() }}</p>
     @if (tipping(); as sentence) {
       <p>{{ sentence }}</p>

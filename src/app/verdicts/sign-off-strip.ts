@@ -1,6 +1,6 @@
 import { ChangeDetectionStrategy, Component, computed, input, output } from '@angular/core';
-import { Verdict } from '../../../shared/contracts';
-import { MomentPipe } from '../ui/quantity/moment-format';
+import { Role, Verdict } from '../../../shared/contracts';
+import { MomentPipe } from '../ui/moment/moment-pipe';
 import { signatures } from './verdict-words';
 
 export type Act = 'submit' | 'signOff' | 'sendBack' | 'withdraw' | 'reRun';
@@ -13,6 +13,9 @@ const ACTS_OF: Record<Verdict['state'], readonly Act[]> = {
   'signed off': ['reRun', 'withdraw'],
   withdrawn: ['reRun'],
 };
+
+/** The acts that carry a verdict on, by the role whose task they are; the others stand beside them. */
+const MAIN_OF: Partial<Record<Act, Role>> = { submit: 'analyst', signOff: 'lead', reRun: 'auditor' };
 
 const LABELS: Record<Act, string> = {
   submit: 'Submit for sign-off',
@@ -40,31 +43,28 @@ interface ActButton {
 })
 export class SignOffStrip {
   readonly verdict = input.required<Verdict>();
+  readonly roles = input.required<readonly Role[]>();
   readonly reRunning = input(false);
   readonly act = output<Act>();
 
   protected readonly signed = computed(() => signatures(this.verdict()));
   private readonly open = computed(() => ACTS_OF[this.verdict().state]);
 
-  /** Main act last, where the eye ends. Closed acts stay away, but for sign-off, which says why. */
+  /** Main act last, where the eye ends. A closed act stays away, but for the main one of the reader's role, which says why. */
   protected readonly buttons = computed<ActButton[]>(() => {
     const { may, mayNot } = this.verdict();
     const shown = this.open().filter((act) => may[act]);
-    const main = shown.find((act) => act !== 'withdraw' && act !== 'sendBack') ?? null;
-    const buttons = shown.map((act) => ({ act, label: LABELS[act], main: act === main, why: null }));
-    const explained =
-      this.open().includes('signOff') && !may.signOff && may.sendBack && mayNot['signOff']
-        ? [{ act: 'signOff' as const, label: LABELS.signOff, main: false, why: mayNot['signOff'] }]
-        : [];
-    return [...explained, ...buttons].sort((one, other) => Number(one.main) - Number(other.main));
+    const main = shown.find((act) => MAIN_OF[act] !== undefined) ?? null;
+    const closed = this.open().filter((act) => {
+      const role = MAIN_OF[act];
+      return !may[act] && mayNot[act] && role !== undefined && this.roles().includes(role);
+    });
+    return [
+      ...closed.map((act) => ({ act, label: LABELS[act], main: false, why: mayNot[act] })),
+      ...shown.map((act) => ({ act, label: LABELS[act], main: act === main, why: null })),
+    ].sort((one, other) => Number(one.main) - Number(other.main));
   });
-  protected readonly why = computed(() => {
-    const explained = this.buttons().find(({ why }) => why !== null);
-    if (explained) return explained.why;
-    if (this.buttons().length > 0) return null;
-    const closed = this.open().find((act) => this.verdict().mayNot[act]);
-    return closed ? this.verdict().mayNot[closed] : null;
-  });
+  protected readonly why = computed(() => this.buttons().find(({ why }) => why !== null)?.why ?? null);
 
   protected choose({ act, why }: ActButton): void {
     if (why === null && !(act === 'reRun' && this.reRunning())) this.act.emit(act);

@@ -26,13 +26,13 @@ describe('words of a verdict', () => {
     expect(counts(['A', 3, null], ['B', 3, null])).toBe('3 runs each, mounts not recorded');
   });
 
-  it('says since when a verdict waits, without today', () => {
+  it('says since when a verdict waits', () => {
     const now = new Date(2026, 2, 12, 15, 0);
     const stateSince = new Date(2026, 2, 12, 9, 41).toISOString();
     expect(stateInWords({ state: 'submitted', stateSince }, now)).toBe(
-      'Waiting for a lead’s sign-off since 09:41',
+      'Waiting for a lead’s sign-off since 12 Mar 09:41',
     );
-    expect(stateInWords({ state: 'signed off', stateSince }, now)).toBe('Signed off today 09:41');
+    expect(stateInWords({ state: 'signed off', stateSince }, now)).toBe('Signed off 12 Mar 09:41');
   });
 });
 

@@ -1,5 +1,5 @@
 import { PairResult, Verdict } from '../../../shared/contracts';
-import { formatMoment } from '../ui/quantity/moment-format';
+import { formatMoment } from '../ui/moment/moment-pipe';
 import { formatLevel, NO_BREAK_SPACE } from '../ui/quantity/quantity-format';
 
 export type VerdictStep = Verdict['steps'][number];
@@ -14,7 +14,7 @@ export function stateInWords(
     case 'judged':
       return `Judged ${since}, not yet submitted`;
     case 'submitted':
-      return `Waiting for a lead’s sign-off since ${since.replace(/^today /, '')}`;
+      return `Waiting for a lead’s sign-off since ${since}`;
     case 'sent back':
       return `Sent back ${since}`;
     case 'signed off':

@@ -2,7 +2,11 @@ import { Routes } from '@angular/router';
 
 /** `/verdicts/:id`; `?pair=2` shows another pair of more than two coolers. */
 const routes: Routes = [
-  { path: ':id', loadComponent: () => import('./verdict-page').then(({ VerdictPage }) => VerdictPage) },
+  {
+    path: ':id',
+    title: 'Verdict',
+    loadComponent: () => import('./verdict-page').then((m) => m.VerdictPage),
+  },
 ];
 
 export default routes;

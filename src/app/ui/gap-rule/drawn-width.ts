@@ -1,16 +1,8 @@
-import {
-  ChangeDetectorRef,
-  computed,
-  DestroyRef,
-  DOCUMENT,
-  ElementRef,
-  inject,
-  Signal,
-  signal,
-} from '@angular/core';
+import { computed, DestroyRef, ElementRef, inject, Signal, signal } from '@angular/core';
+import { Paper } from './paper';
 
 /** Width of a page's text on paper, px. */
-export const PAPER_WIDTH = 716;
+const PAPER_WIDTH = 716;
 
 export interface DrawnWidth {
   /** Width to draw at, CSS px. */
@@ -26,40 +18,15 @@ export interface DrawnWidth {
  */
 export function drawnWidth(unmeasured: number, paper: number | null = PAPER_WIDTH): DrawnWidth {
   const host = inject<ElementRef<HTMLElement>>(ElementRef).nativeElement;
-  const changes = inject(ChangeDetectorRef);
-  const view = inject(DOCUMENT).defaultView;
+  const onPaper = inject(Paper).laidOut;
   const measured = signal(unmeasured);
-  const onPaper = signal(false);
-  const result: DrawnWidth = {
-    width: computed(() => (onPaper() && paper !== null ? paper : measured())),
-    onPaper,
-  };
-  if (!view) return result;
-
-  const stop = new AbortController();
-  const observer =
-    'ResizeObserver' in view
-      ? new ResizeObserver(([entry]) => {
-          const width = Math.floor(entry.contentRect.width);
-          if (width > 0 && !onPaper()) measured.set(width);
-        })
-      : null;
-  observer?.observe(host);
-
-  const setPaper = (paper: boolean): void => {
-    onPaper.set(paper);
-    // The browser lays the paper out as soon as the handler returns, so the new drawing must be there by then.
-    changes.detectChanges();
-  };
-  view.addEventListener('beforeprint', () => setPaper(true), { signal: stop.signal });
-  view.addEventListener('afterprint', () => setPaper(false), { signal: stop.signal });
-  view
-    .matchMedia?.('print')
-    .addEventListener('change', ({ matches }) => setPaper(matches), { signal: stop.signal });
-
-  inject(DestroyRef).onDestroy(() => {
-    stop.abort();
-    observer?.disconnect();
-  });
-  return result;
+  if ('ResizeObserver' in globalThis) {
+    const observer = new ResizeObserver(([entry]) => {
+      const width = Math.floor(entry.contentRect.width);
+      if (width > 0 && !onPaper()) measured.set(width);
+    });
+    observer.observe(host);
+    inject(DestroyRef).onDestroy(() => observer.disconnect());
+  }
+  return { width: computed(() => (onPaper() && paper !== null ? paper : measured())), onPaper };
 }

@@ -10,7 +10,9 @@ import { round, SMALL_TICKS, snap, ticks } from './ticks';
 export interface SmallGapRuleDrawing {
   readonly width: number;
   readonly height: number;
+  /** Drawn through the gaps between a list's rows. */
   readonly zero: string;
+  readonly zeroInside: string;
   readonly edge: string;
   readonly ticks: string;
   readonly notches: readonly { readonly fill: string; readonly line: string }[];
@@ -52,6 +54,7 @@ export function drawSmallGapRule(
     width: frame.width,
     height: HEIGHT,
     zero: `M${zeroX} ${ZERO.from}V${ZERO.to}`,
+    zeroInside: `M${zeroX} 0V${EDGE}`,
     edge: `M${SMALL_PADDING} ${EDGE}H${frame.width - SMALL_PADDING}`,
     ticks: drawnTicks.short + drawnTicks.mid + drawnTicks.long,
     notches: [-pair.gapThatMatters, pair.gapThatMatters]

@@ -1,4 +1,4 @@
-import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
+import { booleanAttribute, ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
 import { PairRow } from '../../../../shared/contracts';
 import { Unit } from '../quantity/quantity-format';
 import { drawnWidth } from './drawn-width';
@@ -19,6 +19,9 @@ export class SmallGapRule {
   /** Half-width of the list's domain, in the unit: `sharedDomain(pairs, unit)`. */
   readonly domain = input.required<number>();
   readonly unit = input<Unit>('°C');
+
+  /** Whether the rule stands by itself: its zero line then stays inside, for no row continues it. */
+  readonly alone = input(false, { transform: booleanAttribute });
 
   protected readonly id = `small-rule-${++rulesMade}`;
   private readonly drawn = drawnWidth(420, null);
