@@ -89,35 +89,31 @@ function cannotRun(name, reason) {
   };
 }
 
-async function runSuites(wanted) {
+/** Packages, and the builds where a wanted suite runs the built product. A build that fails is one failed suite. */
+async function prepareProduct(wanted) {
   await ensurePackages(progress);
-  const tools = await prepareTools(wanted, progress);
-  const suites = [];
-  const runnable = wanted.filter((name) => {
-    const reason = tools.missing.get(name);
-    if (reason) suites.push(cannotRun(name, reason));
-    return !reason;
-  });
-  database = tools.database;
-  const withoutPython = tools.missing.get('notebooks');
-  if (withoutPython) suites.push(cannotRun('notebooks', withoutPython));
-  if (runnable.some((name) => alone.includes(name))) {
-    try {
-      await ensureBuilds(progress);
-    } catch (error) {
-      progress.say(inWords(error));
-      suites.push({
-        ...cannotRun('build', ''),
-        failed: 1,
-        skipped: 0,
-        failures: [inWords(error)],
-        notes: [],
-      });
-    }
+  if (!wanted.some((name) => alone.includes(name))) return [];
+  try {
+    await ensureBuilds(progress);
+    return [];
+  } catch (error) {
+    return [{ name: 'build', passed: 0, failed: 1, skipped: 0, seconds: 0, failures: [inWords(error)] }];
   }
+}
+
+async function runSuites(wanted) {
+  const [tools, suites] = await Promise.all([prepareTools(wanted, progress), prepareProduct(wanted)]);
+  database = tools.database;
+  for (const [name, reason] of tools.missing) suites.push(cannotRun(name, reason));
+  const runnable = wanted.filter((name) => !tools.missing.has(name));
+
   if (runnable.includes('lint')) suites.push(await lintSuite());
   const together = runnable.filter((name) => quick.includes(name));
-  const options = ['--maxWorkers=2', ...(withoutPython ? ['--testPathIgnorePatterns=notebook'] : [])];
+  // Of the unit tests only the notebooks' need Python; they are left out by name where there is none.
+  const options = [
+    '--maxWorkers=2',
+    ...(tools.missing.has('notebooks') ? ['--testPathIgnorePatterns=notebook'] : []),
+  ];
   suites.push(...(await runJest(together, options, tools.environment, progress)));
   const after = runnable.filter((name) => alone.includes(name));
   suites.push(...(await runJest(after, ['--runInBand'], tools.environment, progress)));
