@@ -23,18 +23,24 @@ function wanted() {
 
 const read = (file) => (existsSync(file) ? readFileSync(file, 'utf8') : '');
 
-/** True when npm's own record of what it installed has every package of the lockfile that this platform needs. */
+/**
+ * May a package of the lockfile be missing here? Yes when it is optional and either names another platform or names
+ * none: those are what other platforms' packages need. A C library that is named may be another machine's too.
+ */
+function mayBeMissing({ optional, os, cpu, libc }) {
+  if (!optional) return false;
+  const namesThisOne = os?.includes(process.platform) && (!cpu || cpu.includes(process.arch)) && !libc;
+  return !namesThisOne;
+}
+
+/** True when npm's own record of what it installed has all of the lockfile: somebody ran `npm ci` by hand. */
 function installedByHand() {
   const record = read(join(folder, '.package-lock.json'));
   if (!record) return false;
   const have = JSON.parse(record).packages;
-  const fits = (list, value) => !list || list.includes(value);
   return Object.entries(JSON.parse(readFileSync(lockfile, 'utf8')).packages).every(([path, entry]) => {
     if (path === '') return true;
-    if (!have[path])
-      return (
-        entry.optional && !(fits(entry.os, process.platform) && fits(entry.cpu, process.arch) && !entry.libc)
-      );
+    if (!have[path]) return mayBeMissing(entry);
     return have[path].version === entry.version && have[path].integrity === entry.integrity;
   });
 }
