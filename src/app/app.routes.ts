@@ -38,6 +38,25 @@ export const routes: Routes = [
         canActivate: [requireRole('lead', 'auditor', 'administrator')],
         loadChildren: () => import('./audit/audit.routes'),
       },
+      { path: 'bench', loadChildren: () => import('./bench/bench.routes') },
+      {
+        path: 'thresholds',
+        title: 'Thresholds',
+        canActivate: [requireRole('analyst', 'lead', 'auditor')],
+        loadComponent: () => import('./thresholds/thresholds').then((m) => m.ThresholdsPage),
+      },
+      {
+        path: 'people',
+        title: 'People',
+        canActivate: [requireRole('administrator')],
+        loadComponent: () => import('./people/people').then((m) => m.PeoplePage),
+      },
+      {
+        path: 'outbox',
+        title: 'Outbox',
+        canActivate: [requireRole('administrator')],
+        loadComponent: () => import('./people/outbox').then((m) => m.OutboxPage),
+      },
       {
         path: 'account',
         title: 'Account',
