@@ -5,6 +5,7 @@ import { peopleRoutes } from './accounts/people-routes';
 import { sessionRoutes } from './accounts/session-routes';
 import { ledgerRoutes } from './audit/ledger-routes';
 import { benchRoutes } from './benches/bench-routes';
+import { reRunRoutes } from './audit/re-run-routes';
 import type { Dependencies } from './dependencies';
 import { problemHandler, unknownApiPath } from './http/problem';
 import { mount, route, type Route } from './http/route';
@@ -14,6 +15,7 @@ import { mailRoutes } from './mail/mail-routes';
 import { runRoutes } from './runs/run-routes';
 import { studyRoutes } from './studies/study-routes';
 import { thresholdsRoutes } from './thresholds/thresholds-routes';
+import { judgeRoutes } from './verdicts/judge-routes';
 import { verdictRoutes } from './verdicts/verdict-routes';
 import { waitingRoutes } from './waiting/waiting-routes';
 
@@ -37,7 +39,9 @@ export const apiRoutes = (dependencies: Dependencies): Route[] => [
   ...benchRoutes(dependencies),
   ...studyRoutes(dependencies),
   ...runRoutes(dependencies),
+  ...judgeRoutes(dependencies),
   ...verdictRoutes(dependencies),
+  ...reRunRoutes(dependencies),
   ...waitingRoutes(dependencies),
   ...ledgerRoutes(dependencies),
 ];

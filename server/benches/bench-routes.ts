@@ -2,6 +2,7 @@ import {
   addBenchRequestSchema,
   addCoolerRequestSchema,
   benchesSchema,
+  benchNoiseSchema,
   benchSchema,
   coolerSchema,
   coolersSchema,
@@ -9,6 +10,7 @@ import {
 import type { Dependencies } from '../dependencies';
 import { route, type Route } from '../http/route';
 import { addBench, addCooler, benches, coolers } from './bench-service';
+import { benchNoise } from './noise-service';
 
 export const benchRoutes = (dependencies: Dependencies): Route[] => [
   route({
@@ -25,6 +27,13 @@ export const benchRoutes = (dependencies: Dependencies): Route[] => [
     body: addBenchRequestSchema,
     answer: benchSchema,
     handle: ({ caller, body }) => addBench(body, caller, dependencies),
+  }),
+  route({
+    method: 'get',
+    path: '/api/benches/:id/noise',
+    who: 'any',
+    answer: benchNoiseSchema,
+    handle: ({ caller, id }) => benchNoise(dependencies.db.manager, id, caller.team.id),
   }),
   route({
     method: 'get',

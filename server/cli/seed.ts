@@ -3,14 +3,17 @@ import { mkdtemp, rm, writeFile } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { AccountEntity } from '../accounts/account-entity';
+import { reRunVerdict } from '../audit/re-run-service';
 import { addBench } from '../benches/bench-service';
 import type { Dependencies } from '../dependencies';
 import type { Caller } from '../http/caller';
 import { bringIn } from '../runs/intake-service';
 import { addStudy } from '../studies/study-service';
 import type { Study } from '../../shared/contracts';
+import { judgeCondition } from '../verdicts/judge-service';
+import { takeStep } from '../verdicts/verdict-steps';
 import { DEMO, demoLogs, SAMPLE, type DemoLog } from './demo';
-import { seedPeople } from './seed-people';
+import { seedPeople, type DemoPeople } from './seed-people';
 
 type Progress = (text: string) => void;
 
@@ -68,6 +71,18 @@ async function bringInLogs(
   }
 }
 
+/** The first condition goes the whole way: signed off, and re-run once by the auditor. The second waits for the lead. */
+async function judgeStudy(study: Study, people: DemoPeople, dependencies: Dependencies): Promise<void> {
+  const { analyst, lead, auditor } = people;
+  for (const [index, { id: conditionId }] of study.conditions.entries()) {
+    const verdictId = await judgeCondition(study.id, { conditionId, metric: 'rise' }, analyst, dependencies);
+    await takeStep('submit', verdictId, analyst, { comment: null }, dependencies);
+    if (index > 0) continue;
+    await takeStep('signOff', verdictId, lead, { comment: null }, dependencies);
+    await reRunVerdict(verdictId, auditor, 'auditor', dependencies);
+  }
+}
+
 async function fill(dependencies: Dependencies, progress: Progress): Promise<void> {
   const people = await seedPeople(dependencies.db.manager, dependencies, dependencies.clock());
   const bench = await addBench(
@@ -97,6 +112,8 @@ async function fill(dependencies: Dependencies, progress: Progress): Promise<voi
     dependencies,
   );
   await bringInLogs(study, people.analyst, dependencies, progress);
+  progress('judging the demonstration');
+  await judgeStudy(study, people, dependencies);
   await addStudy(
     {
       name: 'Fin height',

@@ -58,13 +58,13 @@ function closedToSignOff(standing: Standing, actor: Actor): Closed | null {
   if (standing.preparers.includes(actor.accountId))
     return { code: 'own-study', reason: 'You prepared this study. Another lead signs it off.' };
   if (standing.stale) return STALE;
-  if (standing.stops > 0)
-    return { code: 'stop-finding', reason: 'A check blocks sign-off. Its finding says what to do.' };
   if (standing.scopes.includes('runs only'))
     return {
       code: 'runs-only',
       reason: 'The evidence reaches runs of one mount only: the fitting may be the cause. Add mounts.',
     };
+  if (standing.stops > 0)
+    return { code: 'stop-finding', reason: 'A check blocks sign-off. Its finding says what to do.' };
   return null;
 }
 
