@@ -51,7 +51,7 @@ export function parseDate(text: string): WrittenDate | null {
     // Dots are written by people who write the day first, everywhere (common practice, no source).
     if (dayFirst && (m[2] === '.' || !monthFirst)) return { year, first, second, order: 'day first' };
     if (!dayFirst) return { year, first, second, order: 'month first' };
-    return { year, first, second, order: first === second ? 'day first' : 'unclear' };
+    return { year, first, second, order: 'unclear' };
   }
   m = NAMED.exec(text);
   const us = m ? null : NAMED_US.exec(text);

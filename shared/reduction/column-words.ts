@@ -78,9 +78,15 @@ export const TIME: RoleWords = {
   against: /\b(uptime|response|latency|boot|period|interval|dauer)\b/,
 };
 
-/** Weight of a header's words for a role, 0 when they say nothing. */
-export function wordScore(words: string, role: RoleWords): number {
+/** Whether a header's words rule a role out. */
+export function speaksAgainst(words: string, role: RoleWords): boolean {
   const plain = plainWords(words);
-  if (role.against.test(plain) || NEVER.test(plain)) return 0;
+  return role.against.test(plain) || NEVER.test(plain);
+}
+
+/** Weight of a header's words for a role, 0 when they say nothing or speak against it. */
+export function wordScore(words: string, role: RoleWords): number {
+  if (speaksAgainst(words, role)) return 0;
+  const plain = plainWords(words);
   return role.strong.find(([pattern]) => pattern.test(plain))?.[1] ?? 0;
 }

@@ -1,5 +1,5 @@
 import { ColumnMap, ColumnRole } from '../contracts/run-summary';
-import { AMBIENT, FAN_SPEED, HEAT_SOURCE, RoleWords, WATTS, wordScore } from './column-words';
+import { AMBIENT, FAN_SPEED, HEAT_SOURCE, RoleWords, WATTS, speaksAgainst, wordScore } from './column-words';
 import { FoundTime, findTime, timeIn } from './find-time';
 import { TableColumn } from './table-column';
 import { Quantity } from './units';
@@ -35,6 +35,15 @@ export const ROLE_KEYS: Readonly<Record<ColumnRole, keyof ColumnMap>> = {
   'fan speed': 'fanSpeed',
 };
 
+/** Parts as sentences call them. */
+export const ROLE_NAMES: Readonly<Record<ColumnRole, string>> = {
+  time: 'time',
+  'heat source': 'heat source',
+  ambient: 'ambient',
+  watts: 'heat load',
+  'fan speed': 'fan speed',
+};
+
 /** A header that only a unit speaks for scores this much: enough to be a contender, not enough to be taken. */
 const BY_UNIT_ALONE = 1;
 const NAMED = 4;
@@ -43,17 +52,10 @@ function scoreOf(column: TableColumn, words: RoleWords, quantity: Quantity): num
   if (column.mostly === 'text' || column.mostly === 'time') return 0;
   if (column.unit && column.unit.quantity !== quantity) return 0;
   const byWords = wordScore(column.words, words);
-  const plain = column.unit ? wordScore(`${column.words} ${column.unit.name}`, words) : byWords;
-  if (column.unit)
-    return byWords === 0 && plain === 0
-      ? barelyUnit(column, words)
-      : Math.max(byWords, plain, BY_UNIT_ALONE) + 0.5;
-  return byWords >= NAMED ? byWords : byWords > 0 && quantity === 'temperature' ? 0.5 : 0;
+  if (column.unit) return speaksAgainst(column.words, words) ? 0 : Math.max(byWords, BY_UNIT_ALONE) + 0.5;
+  // Without a unit, weak words such as “T1” still make a temperature a contender.
+  return byWords >= NAMED || quantity === 'temperature' ? byWords : 0;
 }
-
-/** A unit without telling words counts only when no word speaks against the role. */
-const barelyUnit = (column: TableColumn, words: RoleWords): number =>
-  words.against.test(column.words.toLowerCase()) ? 0 : BY_UNIT_ALONE;
 
 const unitWords = (column: TableColumn): string =>
   column.unit ? `; unit ${column.unit.name}` : '; no unit is named';
@@ -75,7 +77,7 @@ export function findColumns(columns: readonly TableColumn[]): FoundColumns {
     const [only] = contenders;
     const reason =
       contenders.length === 1 && named
-        ? `Header “${only.header}” names the ${role}${unitWords(only)}.`
+        ? `Header “${only.header}” names the ${ROLE_NAMES[role]}${unitWords(only)}.`
         : 'Several columns fit.';
     parts.set(role, { role, contenders, reason, named });
   }

@@ -86,18 +86,17 @@ function clockTime(column: TableColumn, columns: readonly TableColumn[], kind: '
     .filter((clock) => clock !== null);
   const twoParts = readings.length > 0 && readings.every((clock) => clock.parts === 2);
   const unitName = column.unit?.name ?? '';
-  const first = readings[0]?.seconds ?? 0;
-  // `00:00, 00:01, …` in a column of its own is a stopwatch in minutes and seconds unless its unit says hours;
-  // beside a date, or starting in the middle of a day, it is the time of day.
+  // `00:00, 00:01, …` may be a stopwatch in minutes and seconds or a clock in hours and minutes. Past 24:00 it is no clock,
+  // beside a date it is one; else the length of the whole log has to tell.
   const minutesFirst =
     kind === 'clock' &&
     twoParts &&
     (unitName === 'mm:ss' || readings.some((clock) => clock.seconds >= 24 * 3600));
-  const unsure = kind === 'clock' && twoParts && !minutesFirst && unitName !== 'hh:mm' && first < 3600;
   const date =
     kind === 'clock' && !minutesFirst
       ? columns.find((other) => other !== column && isDateColumn(other))
       : undefined;
+  const unsure = kind === 'clock' && twoParts && !minutesFirst && unitName !== 'hh:mm' && !date;
   const named = column.header === '' ? 'Cells' : `Header “${column.header}”`;
   const holds = kind === 'stamp' ? 'a date and a clock' : minutesFirst ? 'minutes and seconds' : 'a clock';
   return {
@@ -114,10 +113,18 @@ function clockTime(column: TableColumn, columns: readonly TableColumn[], kind: '
   };
 }
 
-/** The time in a column a person or a bench has chosen. */
+/** The time in a column a person or a bench has chosen. Chosen after a doubt, `12:30` is minutes and seconds. */
 export function timeIn(column: TableColumn, columns: readonly TableColumn[]): FoundTime | null {
   if (isStampColumn(column)) return clockTime(column, columns, 'stamp');
-  if (isClockColumn(column)) return clockTime(column, columns, 'clock');
+  if (isClockColumn(column)) {
+    const found = clockTime(column, columns, 'clock');
+    if (!found.unsure) return found;
+    return {
+      source: { ...found.source, minutesFirst: true },
+      reason: 'Chosen; its cells hold minutes and seconds.',
+      unsure: false,
+    };
+  }
   return column.mostly === 'number' ? { ...numericTime(column), unsure: false } : null;
 }
 
@@ -128,7 +135,7 @@ export function findTime(columns: readonly TableColumn[]): FoundTime | null {
     .map((column) => ({
       column,
       score:
-        wordScore(column.header, TIME) +
+        Math.max(wordScore(column.header, TIME), wordScore(column.words, TIME)) +
         (column.unit?.quantity === 'time' ? 3 : 0) -
         (column.unit && column.unit.quantity !== 'time' ? 20 : 0),
     }))

@@ -1,17 +1,24 @@
-import { ColumnMap, FoundColumn, RunFinding } from '../contracts/run-summary';
-import { Collector } from './collector';
+import { ColumnMap, FoundColumn } from '../contracts/run-summary';
 import { settleCandidates } from './behaviour';
-import { FoundColumns, ROLE_KEYS } from './find-columns';
-import { Head } from './head';
 import { isoFromSeconds } from './calendar';
-import { ReadLog, ReadingOptions } from './log';
-import { Problems, columnName } from './problems';
+import { Collector } from './collector';
+import { FoundColumns, ROLE_KEYS } from './find-columns';
+import { FoundTime } from './find-time';
+import { Head } from './head';
+import { Log, ReadLog, ReadingOptions } from './log';
+import { Problems, columnHeader } from './problems';
 import { readingFindings } from './reading-findings';
 import { TableColumn } from './table-column';
-import { settleAxis } from './time-axis';
+import { TimeAxis, settleAxis } from './time-axis';
+import { SettledTimes } from './time-source';
+import { doubtOf } from './time-doubts';
 import { fixed } from './words';
 
-interface Context {
+/** What reading a log has found out before its end. */
+export interface ReadTable {
+  readonly head: Head;
+  readonly columns: readonly TableColumn[];
+  readonly found: FoundColumns;
   readonly encoding: string;
   readonly problems: Problems;
   readonly options: ReadingOptions;
@@ -19,137 +26,134 @@ interface Context {
 
 const NO_COLUMNS: ColumnMap = { time: null, heatSource: null, ambient: null, watts: null, fanSpeed: null };
 
-function dialectOf(head: Head, columns: readonly TableColumn[], encoding: string) {
+function roleAt(map: ColumnMap, datePosition: number | null, position: number): FoundColumn['role'] {
+  if (position === datePosition) return 'time';
+  const found = Object.entries(ROLE_KEYS).find(([, key]) => map[key] === position);
+  return found ? (found[0] as FoundColumn['role']) : null;
+}
+
+/** The log's description without its readings. */
+function describe(
+  table: ReadTable,
+  map: ColumnMap,
+  reasons: ReadonlyMap<number, string>,
+): Omit<Log, 'seconds' | 'rows' | 'kept'> {
+  const { head, columns, found, encoding, problems } = table;
   const marks = columns.map((column) => column.decimal);
   return {
-    encoding,
-    delimiter: head.delimiter,
-    decimal: marks.includes(',')
-      ? (',' as const)
-      : marks.includes('.')
-        ? ('.' as const)
-        : ('either' as const),
-    headerRow: head.headerRow,
-    firstDataRow: head.firstDataRow,
+    fileName: problems.file,
+    columns: columns.map((column) => ({
+      position: column.position,
+      header: columnHeader(column),
+      unit: column.unit?.name ?? null,
+      role: roleAt(map, found.time?.source.datePosition ?? null, column.position),
+      reason: reasons.get(column.position) ?? 'Not needed.',
+      firstReading: column.firstReading,
+    })),
+    columnMap: map,
+    dialect: {
+      encoding,
+      delimiter: head.delimiter,
+      decimal: marks.includes(',') ? ',' : marks.includes('.') ? '.' : 'either',
+      headerRow: head.headerRow,
+      firstDataRow: head.firstDataRow,
+    },
+    startedAt: null,
+    findings: [],
   };
 }
 
-/** Turns what was collected into a log: order of time, roles of the columns, findings, problems. */
-export function finishLog(
-  head: Head,
-  columns: readonly TableColumn[],
-  found: FoundColumns,
-  collector: Collector | null,
-  { encoding, problems, options }: Context,
-): ReadLog {
-  const dialect = dialectOf(head, columns, encoding);
-  const shown = (map: ColumnMap, reasons: ReadonlyMap<number, string>): FoundColumn[] =>
-    columns.map((column) => ({
-      position: column.position,
-      header: column.header,
-      unit: column.unit?.name ?? null,
-      role: roleAt(map, found, column.position),
-      reason: reasons.get(column.position) ?? 'Not needed.',
-      firstReading: column.firstReading,
-    }));
-  const bare = (map: ColumnMap, reasons: ReadonlyMap<number, string>): ReadLog => ({
-    log: {
-      fileName: problems.file,
-      columns: shown(map, reasons),
-      columnMap: map,
-      dialect,
-      seconds: new Float64Array(0),
-      rows: new Uint32Array(0),
-      kept: new Map(),
-      startedAt: null,
-      findings: [],
-    },
-    problems: problems.list,
-  });
+/** A log whose columns can be shown and chosen, but whose readings cannot be used yet. */
+const withoutReadings = (table: ReadTable): ReadLog => ({
+  log: {
+    ...describe(table, NO_COLUMNS, new Map()),
+    seconds: new Float64Array(0),
+    rows: new Uint32Array(0),
+    kept: new Map(),
+  },
+  problems: table.problems.list,
+});
+
+/** Says what is wrong with the times; null when they cannot be used. */
+function axisOf(
+  table: ReadTable,
+  time: FoundTime,
+  collector: Collector,
+  settled: SettledTimes,
+): TimeAxis | null {
+  const axis = settleAxis(settled.seconds, collector.rows.view(), time.source.kind);
+  if (!('fault' in axis)) return axis;
+  const still = axis.fault === 'standing still';
+  table.problems.add(
+    still ? 'time-stands-still' : 'time-out-of-order',
+    still
+      ? 'The time is the same in every row. Expected times that rise from row to row; choose another column for time.'
+      : `The time falls back at ${fixed(axis.falls, 0)} places, first in this row. Expected times that rise from row to row; sort the log by time, or choose another column.`,
+    collector.rows.view()[axis.at],
+    columnHeader(table.columns[time.source.position]),
+  );
+  return null;
+}
+
+function tellUnclearDate(table: ReadTable, time: FoundTime, settled: SettledTimes): void {
+  if (!settled.dateUnclear) return;
+  const { first, second, year } = settled.dateUnclear;
+  table.problems.add(
+    'date-order-unclear',
+    `The date ${first}/${second}/${year} reads two ways, and the log does not tell which number is the day. The times inside the run are the same either way; only the day it started on is left open.`,
+    table.head.firstDataRow,
+    columnHeader(table.columns[time.source.datePosition ?? time.source.position]),
+  );
+}
+
+/** Turns what was collected into a log: order of time, parts of the columns, findings, problems. */
+export function finishLog(table: ReadTable, collector: Collector | null): ReadLog {
+  const { head, columns, found, problems, options } = table;
   if (!found.time || !collector) {
-    problems.add(
-      'no-time',
-      'No column holds the time. Expected seconds since the start, a clock, or a date and clock; choose the column, or export the log with one.',
-      head.headerRow,
-    );
-    return bare(NO_COLUMNS, new Map());
+    if (problems.list.length === 0) {
+      problems.add(
+        'no-time',
+        'No column holds the time. Expected seconds since the start, a clock, or a date and clock; choose the column, or export the log with one.',
+        head.headerRow,
+      );
+    }
+    return withoutReadings(table);
   }
-  const timeColumn = columns[found.time.source.position];
   const settled = collector.track.settle(options.dateOrder);
   if (settled.seconds.length < 2) {
-    problems.noTable('no readings', head.firstDataRow);
+    problems.noTable({
+      fault: settled.seconds.length === 0 ? 'no readings' : 'one row',
+      row: head.firstDataRow,
+      cells: 0,
+    });
     return { log: null, problems: problems.list };
   }
-  const axis = settleAxis(settled.seconds, collector.rows.view(), found.time.source.kind);
-  if ('fault' in axis) {
-    const row = collector.rows.view()[axis.at];
-    problems.add(
-      axis.fault === 'standing still' ? 'time-stands-still' : 'time-out-of-order',
-      axis.fault === 'standing still'
-        ? 'The time is the same in every row. Expected times that rise from row to row; choose another column for time.'
-        : `The time falls back at ${fixed(axis.falls, 0)} places, first in this row. Expected times that rise from row to row; sort the log by time, or choose another column.`,
-      row,
-      columnName(timeColumn.header, timeColumn.position),
-    );
-    return bare({ ...NO_COLUMNS }, new Map());
-  }
-  const duration = axis.seconds[axis.seconds.length - 1];
+  const axis = axisOf(table, found.time, collector, settled);
+  if (!axis) return withoutReadings(table);
+  const timeColumn = columns[found.time.source.position];
   const pick = (values: Float64Array): Float64Array => {
     const used = values.slice(axis.from, axis.to);
     return axis.reversed ? used.reverse() : used;
   };
   const kept = new Map(collector.kept.map((column) => [column.column.position, pick(column.values.view())]));
-  const { map, reasons } = settleCandidates(
-    found,
-    kept,
-    problems,
-    head.headerRow,
-    (options.columnMap ?? null) !== null,
-  );
-  const reasonOfTime = new Map(reasons).set(timeColumn.position, found.time.reason);
+  const { map, reasons } = settleCandidates(table, kept);
+  reasons.set(timeColumn.position, found.time.reason);
   if (found.time.source.datePosition !== null)
-    reasonOfTime.set(found.time.source.datePosition, 'The date of the time.');
-  let time: number | null = timeColumn.position;
-  if (found.time.unsure && (duration < 120 || duration > 7 * 86400)) {
-    time = null;
-    problems.add(
-      'time-unit-unclear',
-      `Read as seconds the log would last ${fixed(duration, 0)} s. Name the unit in the header, such as “time_min” or “time_ms”, or choose the column to have it read as seconds.`,
-      head.headerRow,
-      columnName(timeColumn.header, timeColumn.position),
-    );
-  }
-  if (settled.dateUnclear) {
-    const { first, second, year } = settled.dateUnclear;
-    problems.add(
-      'date-order-unclear',
-      `The date ${first}/${second}/${year} reads two ways, and the log does not tell which number is the day. The times inside the run are the same either way; only the day it started on is left open.`,
-      head.firstDataRow,
-      columnName(timeColumn.header, timeColumn.position),
-    );
-  }
+    reasons.set(found.time.source.datePosition, 'The date of the time.');
+  const doubt = doubtOf(found.time, axis.seconds);
+  if (doubt) problems.add('time-unit-unclear', doubt, head.headerRow, columnHeader(timeColumn));
+  tellUnclearDate(table, found.time, settled);
   const rows = pick(collector.rows.view());
-  const fullMap = { ...map, time };
-  const findings: RunFinding[] = [...axis.findings, ...readingFindings(collector, fullMap, axis, rows)];
+  const fullMap: ColumnMap = { ...map, time: doubt ? null : timeColumn.position };
   return {
     log: {
-      fileName: problems.file,
-      columns: shown(fullMap, reasonOfTime),
-      columnMap: fullMap,
-      dialect,
+      ...describe(table, fullMap, reasons),
       seconds: axis.seconds,
       rows: Uint32Array.from(rows),
       kept,
       startedAt: settled.dated ? isoFromSeconds(axis.start) : null,
-      findings,
+      findings: [...axis.findings, ...readingFindings(table, collector, fullMap, axis, rows)],
     },
     problems: problems.list,
   };
-}
-
-function roleAt(map: ColumnMap, found: FoundColumns, position: number): FoundColumn['role'] {
-  if (found.time && position === found.time.source.datePosition) return 'time';
-  for (const [role, key] of Object.entries(ROLE_KEYS))
-    if (map[key] === position) return role as FoundColumn['role'];
-  return null;
 }

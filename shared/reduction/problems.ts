@@ -1,6 +1,23 @@
 import { LogProblem } from '../contracts/run-summary';
-import { count, quoted } from './words';
 import { HeadFault } from './head';
+import { TableColumn } from './table-column';
+import { count, quoted } from './words';
+
+const FAULT_TEXTS: Readonly<Record<HeadFault['fault'], (cells: number) => string>> = {
+  empty: () => 'The file is empty. Check that the logger had finished writing it, then export it again.',
+  'one column': () =>
+    'No comma, semicolon or tab separates columns. A log needs at least a time and a heat-source column; export it as CSV.',
+  'no readings': () =>
+    'No rows of readings were found. Expected a header such as “time_s, plate_c, ambient_c, watts” and below it one row of numbers for each moment.',
+  'one row': () =>
+    'Only one row of readings was found. A run needs at least 10 minutes of readings; if this row holds means already taken, bring in the log they come from.',
+  'quote left open': () =>
+    'A quote mark opens in this row and is never closed, so the rows after it run together. Close or remove it, or export the log again.',
+  'comma twice': () =>
+    'Commas both separate the columns and mark the decimals, so the cells cannot be told apart. Export the log with semicolons or tabs between columns, or with decimal points.',
+  'too many columns': (cells) =>
+    `${count(cells, 'column')} in one row; a log may have up to 1,000. Export fewer channels, or check that rows end in line breaks.`,
+};
 
 /** Makes the problems of one file, so that each says where it lies. */
 export class Problems {
@@ -23,23 +40,14 @@ export class Problems {
   }
 
   /** A file whose head shows no table. */
-  noTable(fault: HeadFault, delimiterRow: number | null): void {
-    const texts: Record<HeadFault, string> = {
-      empty: 'The file is empty. Check that the logger had finished writing it, then export it again.',
-      'one column':
-        'No comma, semicolon or tab separates columns. A log needs at least a time and a heat-source column; export it as CSV.',
-      'no readings':
-        'No rows of readings were found. Expected a header such as “time_s, plate_c, ambient_c, watts” and below it one row of numbers for each moment.',
-      'one row':
-        'Only one row of readings was found. A run needs at least 10 minutes of readings; if these are means already taken, bring in the log they come from.',
-    };
-    this.add(fault.replaceAll(' ', '-'), texts[fault], delimiterRow);
+  noTable({ fault, row, cells }: HeadFault): void {
+    this.add(fault.replaceAll(' ', '-'), FAULT_TEXTS[fault](cells), row);
   }
 
-  tooManyColumns(columns: number, row: number): void {
+  headerMismatch(names: number, cells: number, row: number | null): void {
     this.add(
-      'too-many-columns',
-      `${count(columns, 'column')} in one row; a log may have up to 1,000. Export fewer channels, or check that rows end in line breaks.`,
+      'header-mismatch',
+      `The header names ${count(names, 'column')}, but the rows have ${count(cells, 'cell')}, so names and readings may be shifted against each other. Mend the header, or choose the columns by hand.`,
       row,
     );
   }
@@ -53,6 +61,16 @@ export class Problems {
   }
 }
 
-/** A column by name, or by number where it has no name of its own. */
-export const columnName = (header: string, position: number): string =>
-  header === '' ? `column ${position + 1}` : quoted(header);
+/** Names of columns for sentences: quoted; by number too where a name is repeated, by number alone where there is none. */
+export function columnNames(columns: readonly TableColumn[]): (column: TableColumn) => string {
+  const uses = new Map<string, number>();
+  for (const { header } of columns) uses.set(header, (uses.get(header) ?? 0) + 1);
+  return ({ header, position }) => {
+    if (header === '') return `column ${position + 1}`;
+    return (uses.get(header) ?? 0) > 1 ? `column ${position + 1} (${quoted(header)})` : quoted(header);
+  };
+}
+
+/** A column's header as a problem's `column` field gives it; its number where it has none. */
+export const columnHeader = ({ header, position }: TableColumn): string =>
+  header === '' ? `column ${position + 1}` : header;

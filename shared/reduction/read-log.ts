@@ -1,38 +1,37 @@
-import * as Papa from 'papaparse';
+import { Body, BodyFault, LONGEST_LINE, bodyOf } from './body';
 import { Collector } from './collector';
-import { chosenColumns, findColumns } from './find-columns';
-import { Head, Row, findHead } from './head';
-import { LogReading, ReadLog, ReadingOptions } from './log';
+import { FoundColumns, chosenColumns, findColumns } from './find-columns';
 import { finishLog } from './finish-log';
+import { Head, findHead } from './head';
+import { LogReading, ReadLog, ReadingOptions } from './log';
 import { Problems } from './problems';
-import { TableColumn, describeColumns } from './table-column';
-import { TextStream } from './text-decoding';
+import { TableColumn, describeColumns, headerMismatch } from './table-column';
+import { sniff } from './text-decoding';
 
-/** Text looked at before columns are decided. */
-const HEAD_CHARACTERS = 65536;
-/** A wide table may need more text to show a few rows. */
+/** Bytes looked at before the columns are decided; a wide table may need more to show a few rows. */
+const HEAD_BYTES = 65536;
 const HEAD_LINES = 40;
 const HEAD_AT_MOST = 2_000_000;
-const LONGEST_LINE = 500_000;
-const MOST_COLUMNS = 1000;
-/** Bytes decoded at a time, so that a whole file handed over at once is not held as text too. */
-const DECODED_AT_ONCE = 262144;
+/** Bytes taken at a time, so that a whole file handed over at once is not held a second time. */
+const AT_ONCE = 262144;
 
 interface Table {
   readonly head: Head;
   readonly columns: readonly TableColumn[];
-  readonly found: ReturnType<typeof findColumns>;
+  readonly found: FoundColumns;
+  readonly encoding: string;
   /** null when the log has no time: nothing can be collected then. */
   readonly collector: Collector | null;
+  readonly body: Body | null;
 }
 
 /** Reads one log from its bytes; see `startReading`. */
 class LogReader implements LogReading {
-  private readonly text = new TextStream();
   private readonly problems: Problems;
-  private pending = '';
+  private held: Uint8Array = new Uint8Array(HEAD_BYTES);
+  private heldBytes = 0;
+  private triedAt = 0;
   private table: Table | null = null;
-  private row = 1;
   private stopped = false;
 
   constructor(
@@ -43,100 +42,121 @@ class LogReader implements LogReading {
   }
 
   write(bytes: Uint8Array): void {
-    for (let at = 0; at < bytes.length && !this.stopped; at += DECODED_AT_ONCE) {
-      this.takeText(this.text.write(bytes.subarray(at, at + DECODED_AT_ONCE)), false);
+    for (let at = 0; at < bytes.length && !this.stopped; at += AT_ONCE) {
+      const part = bytes.subarray(at, at + AT_ONCE);
+      if (this.table) this.tell(this.table.body?.take(part, false) ?? null);
+      else this.hold(part);
     }
   }
 
   end(): ReadLog {
-    if (!this.stopped) this.takeText(this.text.end(), true);
+    if (!this.stopped && !this.table) this.beginTable(true);
+    if (!this.stopped) this.tell(this.table?.body?.take(new Uint8Array(0), true) ?? null);
     if (this.stopped || !this.table) return { log: null, problems: this.problems.list };
-    return finishLog(this.table.head, this.table.columns, this.table.found, this.table.collector, {
-      encoding: this.text.encoding ?? 'utf-8',
-      problems: this.problems,
-      options: this.options,
-    });
+    const { head, columns, found, encoding, collector } = this.table;
+    const { problems, options } = this;
+    return finishLog({ head, columns, found, encoding, problems, options }, collector);
   }
 
-  private takeText(text: string, last: boolean): void {
-    if (this.text.refused) {
-      this.problems.notText(this.text.refused.notText, this.text.refused.archive);
-      this.stop();
-      return;
+  private hold(part: Uint8Array): void {
+    if (this.heldBytes + part.length > this.held.length) {
+      const larger = new Uint8Array(2 * (this.heldBytes + part.length));
+      larger.set(this.held.subarray(0, this.heldBytes));
+      this.held = larger;
     }
-    this.pending += text;
-    if (!this.table && (last || this.headIsThere())) this.beginTable(last);
-    if (this.table) this.takeRows(last);
-    if (!this.stopped && this.pending.length > LONGEST_LINE && this.table) {
-      this.problems.longLine(this.row, LONGEST_LINE);
-      this.stop();
-    }
+    this.held.set(part, this.heldBytes);
+    this.heldBytes += part.length;
+    if (this.heldBytes >= HEAD_BYTES && this.heldBytes >= 2 * this.triedAt) this.beginTable(false);
   }
 
-  private headIsThere(): boolean {
-    if (this.pending.length < HEAD_CHARACTERS) return false;
-    if (this.pending.length >= HEAD_AT_MOST) return true;
-    let at = -1;
-    for (let lines = 0; lines < HEAD_LINES; lines += 1) {
-      at = this.pending.indexOf('\n', at + 1);
-      if (at === -1) return false;
-    }
-    return true;
-  }
-
+  /** Finds the table in the bytes held so far, once there are enough of them. */
   private beginTable(last: boolean): void {
-    // A log that stops in the middle of a line still shows its head; the last line may be cut.
-    const cut = Math.max(this.pending.lastIndexOf('\n'), this.pending.lastIndexOf('\r'));
-    const whole = last || cut === -1 ? this.pending : this.pending.slice(0, cut + 1);
-    if (cut === -1 && this.pending.length > LONGEST_LINE) {
-      this.problems.longLine(1, LONGEST_LINE);
+    const bytes = this.held.subarray(0, this.heldBytes);
+    const sniffed = sniff(bytes);
+    if ('notText' in sniffed) {
+      this.problems.notText(sniffed.notText, sniffed.archive);
       this.stop();
       return;
     }
-    const head = findHead(whole);
-    if (typeof head === 'string') {
-      this.problems.noTable(head, null);
+    const { encoding } = sniffed;
+    const text = new TextDecoder(encoding).decode(bytes, { stream: !last });
+    this.triedAt = this.heldBytes;
+    const { head: headText, lines } = firstLines(text, last);
+    if (!last && this.heldBytes < HEAD_AT_MOST && lines < HEAD_LINES) return;
+    if (!last && lines === 0) {
+      this.tell({ fault: 'line too long', row: 1 });
+      return;
+    }
+    const head = findHead(headText);
+    if ('fault' in head) {
+      this.problems.noTable(head);
       this.stop();
       return;
     }
     const columns = describeColumns(head);
-    if (columns.length > MOST_COLUMNS) {
-      this.problems.tooManyColumns(columns.length, head.firstDataRow);
-      this.stop();
-      return;
+    const found = this.columnsOf(head, columns);
+    const kept = new Map<TableColumn, boolean>();
+    for (const { role, contenders } of found.parts.values()) {
+      const temperature = role === 'heat source' || role === 'ambient';
+      for (const column of contenders) kept.set(column, temperature);
     }
-    const map = this.options.columnMap;
-    const found = map ? chosenColumns(columns, map) : findColumns(columns);
-    const kept = new Set([...found.parts.values()].flatMap((part) => part.contenders));
     const collector = found.time
-      ? new Collector(found.time.source, [...kept], columns.length, head.names)
+      ? new Collector(found.time.source, kept, columns.length, head.names, head.units)
       : null;
-    this.table = { head, columns, found, collector };
+    const body = collector ? bodyOf(head, collector, encoding) : null;
+    this.table = { head, columns, found, encoding, collector, body };
+    this.held = new Uint8Array(0);
+    this.tell(body?.take(bytes.subarray(startOfRow(bytes, head, encoding)), false) ?? null);
   }
 
-  /** Takes the complete rows of the pending text; Papa tells how far they reach. */
-  private takeRows(last: boolean): void {
-    const { head, collector } = this.table!;
-    const parser = new Papa.Parser({ delimiter: head.delimiter, newline: head.newline });
-    const parsed = parser.parse(this.pending, 0, !last) as { data: string[][]; meta: { cursor: number } };
-    const quoted = this.pending.includes('"');
-    for (const cells of parsed.data) {
-      const row: Row = { number: this.row, cells };
-      this.row += 1;
-      if (quoted) {
-        for (const cell of cells)
-          if (cell.includes(head.newline)) this.row += cell.split(head.newline).length - 1;
-      }
-      if (row.number >= head.firstDataRow) collector?.take(row);
-    }
-    this.pending = last ? '' : this.pending.slice(parsed.meta.cursor);
+  private columnsOf(head: Head, columns: readonly TableColumn[]): FoundColumns {
+    const map = this.options.columnMap;
+    if (map) return chosenColumns(columns, map);
+    const mismatch = headerMismatch(head);
+    if (!mismatch) return findColumns(columns);
+    this.problems.headerMismatch(mismatch.names, mismatch.cells, head.headerRow);
+    return { time: null, parts: new Map() };
+  }
+
+  private tell(fault: BodyFault | null): void {
+    if (!fault) return;
+    if (fault.fault === 'line too long') this.problems.longLine(fault.row, LONGEST_LINE);
+    else this.problems.noTable({ fault: fault.fault, row: fault.row, cells: 0 });
+    this.stop();
   }
 
   private stop(): void {
     this.stopped = true;
-    this.pending = '';
+    this.held = new Uint8Array(0);
     this.table = null;
   }
+}
+
+/** The complete lines of a text's beginning, some tens of them; the unfinished last line too where the file ends with it. */
+function firstLines(text: string, last: boolean): { head: string; lines: number } {
+  const newline = text.includes('\n') || !text.includes('\r') ? '\n' : '\r';
+  let end = 0;
+  let lines = 0;
+  while (lines < HEAD_LINES || end < HEAD_BYTES) {
+    const next = text.indexOf(newline, end);
+    if (next === -1) return { head: last ? text : text.slice(0, end), lines };
+    end = next + 1;
+    lines += 1;
+  }
+  return { head: text.slice(0, end), lines };
+}
+
+/** Where the first row of readings begins: so many line ends lie before it, quoted ones included. */
+function startOfRow(bytes: Uint8Array, head: Head, encoding: string): number {
+  const newline = head.newline.charCodeAt(0);
+  const wide = encoding.startsWith('utf-16');
+  const high = encoding === 'utf-16be' ? 0 : 1;
+  let row = 1;
+  let at = 0;
+  for (; at < bytes.length && row < head.firstDataRow; at += wide ? 2 : 1) {
+    if (wide ? bytes[at + 1 - high] === newline && bytes[at + high] === 0 : bytes[at] === newline) row += 1;
+  }
+  return at;
 }
 
 /**

@@ -1,6 +1,7 @@
 import { ColumnMap, RunFinding } from '../contracts/run-summary';
-import { Collector, OddRow } from './collector';
-import { columnName } from './problems';
+import { Collector, KeptColumn, OddRow } from './collector';
+import type { ReadTable } from './finish-log';
+import { columnNames } from './problems';
 import { TimeAxis } from './time-axis';
 import { count, quoted } from './words';
 
@@ -59,27 +60,53 @@ function insideFinding(inside: readonly OddRow[], total: number): RunFinding {
   };
 }
 
+/** Cells of a column that hold no reading: told apart are those that are no number, and those that are empty or say so. */
+function cellFindings(
+  kept: KeptColumn,
+  name: string,
+  total: number,
+  timeOf: (row: number) => number | null,
+): RunFinding[] {
+  const findings: RunFinding[] = [];
+  if (kept.badCount > 0) {
+    const [first] = kept.bad;
+    findings.push({
+      code: 'bad-cells',
+      level: kept.badCount > total / 100 ? 'caution' : 'note',
+      text: `${count(kept.badCount, 'cell')} of ${name} ${kept.badCount === 1 ? 'is no reading and is' : 'are no readings and are'} skipped; the first is ${quoted(first.text)} in row ${first.row}.`,
+      atSeconds: timeOf(first.row),
+    });
+  }
+  // A column that is filled only every so many rows is a slower sensor, not one that failed.
+  if (kept.firstBlank && kept.blankCount <= total / 2) {
+    const { row, text } = kept.firstBlank;
+    findings.push({
+      code: 'blank-cells',
+      level: kept.blankCount > total / 20 ? 'caution' : 'note',
+      text: `${count(kept.blankCount, 'cell')} of ${name} ${kept.blankCount === 1 ? 'has' : 'have'} no value and ${kept.blankCount === 1 ? 'is' : 'are'} skipped; the first is row ${row}${text === '' ? '' : ` (${quoted(text)})`}.`,
+      atSeconds: timeOf(row),
+    });
+  }
+  return findings;
+}
+
 /** What reading skipped or noticed, as findings: nothing is left out silently. */
 export function readingFindings(
+  table: ReadTable,
   collector: Collector,
   map: ColumnMap,
   axis: TimeAxis,
   rows: ArrayLike<number>,
 ): RunFinding[] {
-  const findings = oddRowFindings(collector);
+  const name = columnNames(table.columns);
   const used = new Set<number | null>([map.heatSource, map.ambient, map.watts, map.fanSpeed]);
-  for (const kept of collector.kept) {
-    if (!used.has(kept.column.position) || kept.badCount === 0) continue;
-    const name = columnName(kept.column.header, kept.column.position);
-    const [first] = kept.bad;
-    let at: number | null = null;
-    for (let i = 0; i < rows.length && at === null; i += 1) if (rows[i] === first.row) at = axis.seconds[i];
-    findings.push({
-      code: 'bad-cells',
-      level: 'caution',
-      text: `${count(kept.badCount, 'cell')} of ${name} ${kept.badCount === 1 ? 'is not a reading' : 'are not readings'} and ${kept.badCount === 1 ? 'is' : 'are'} skipped; the first is ${quoted(first.text)} in row ${first.row}.`,
-      atSeconds: at,
-    });
-  }
-  return findings;
+  const timeOf = (row: number): number | null => {
+    for (let i = 0; i < rows.length; i += 1) if (rows[i] === row) return axis.seconds[i];
+    return null;
+  };
+  return oddRowFindings(collector).concat(
+    collector.kept
+      .filter((kept) => used.has(kept.column.position))
+      .flatMap((kept) => cellFindings(kept, name(kept.column), collector.rows.length, timeOf)),
+  );
 }

@@ -1,6 +1,3 @@
-/** First bytes kept back until they have told the encoding. */
-const SNIFFED_BYTES = 16384;
-
 interface Signature {
   readonly bytes: readonly number[];
   readonly what: string;
@@ -57,46 +54,4 @@ export function sniff(bytes: Uint8Array): Sniffed {
     return { notText: 'binary data', archive: false };
   }
   return { encoding: decodesAsUtf8(bytes) ? 'utf-8' : 'windows-1252' };
-}
-
-/** Bytes in, text out, in chunks; the encoding is decided once, by the first bytes. */
-export class TextStream {
-  private held: Uint8Array[] = [];
-  private heldBytes = 0;
-  private decoder: InstanceType<typeof TextDecoder> | null = null;
-  /** Encoding once known. */
-  encoding: string | null = null;
-  /** What the file is instead of text, once known. */
-  refused: { readonly notText: string; readonly archive: boolean } | null = null;
-
-  write(bytes: Uint8Array): string {
-    if (this.refused) return '';
-    if (this.decoder) return this.decoder.decode(bytes, { stream: true });
-    this.held.push(bytes.slice());
-    this.heldBytes += bytes.length;
-    return this.heldBytes >= SNIFFED_BYTES ? this.begin() : '';
-  }
-
-  end(): string {
-    const first = this.decoder ? '' : this.begin();
-    return this.decoder ? first + this.decoder.decode() : '';
-  }
-
-  private begin(): string {
-    const all = new Uint8Array(this.heldBytes);
-    let at = 0;
-    for (const part of this.held) {
-      all.set(part, at);
-      at += part.length;
-    }
-    this.held = [];
-    const sniffed = sniff(all);
-    if ('notText' in sniffed) {
-      this.refused = sniffed;
-      return '';
-    }
-    this.encoding = sniffed.encoding;
-    this.decoder = new TextDecoder(sniffed.encoding);
-    return this.decoder.decode(all, { stream: true });
-  }
 }

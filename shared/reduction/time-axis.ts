@@ -1,5 +1,6 @@
 import { RunFinding } from '../contracts/run-summary';
-import { clock, count, stretch } from './words';
+import { spreadStamps } from './coarse-clock';
+import { count, stretch } from './words';
 
 /** The readings of a run in order of time: which of the rows they are, and when. */
 export interface TimeAxis {
@@ -123,7 +124,17 @@ export function settleAxis(
     }
     seconds[i] = original[i] + added;
   }
-  const used = seconds.slice(from, to);
+  const stamped = seconds.slice(from, to);
+  const spread = spreadStamps(stamped);
+  if (spread) {
+    findings.push({
+      code: 'coarse-clock',
+      level: 'note',
+      text: `Many readings share one time, for the clock is written only every ${stretch(usualStep(stamped))}. Inside each such time the readings are taken to be evenly spaced.`,
+      atSeconds: null,
+    });
+  }
+  const used = spread ?? stamped;
   const start = used[0];
   for (let i = 0; i < used.length; i += 1) used[i] -= start;
   if (used.length > 0 && used[used.length - 1] === 0) return { fault: 'standing still', falls: 0, at: 0 };
@@ -136,6 +147,3 @@ export function settleAxis(
     findings,
   };
 }
-
-/** Moment of a finding for a sentence. */
-export const atClock = (seconds: number): string => `at ${clock(seconds)}`;

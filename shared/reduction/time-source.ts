@@ -19,35 +19,49 @@ export interface TimeSource {
   readonly decimal: DecimalMark;
 }
 
+/** The number of two digits at a place; NaN when they are none. */
+function twoDigits(text: string, at: number): number {
+  const tens = text.charCodeAt(at) - 48;
+  const ones = text.charCodeAt(at + 1) - 48;
+  return tens >= 0 && tens <= 9 && ones >= 0 && ones <= 9 ? tens * 10 + ones : NaN;
+}
+
 /** Times as they come in: seconds of the day or of the run, with the rows at which the date changes kept apart,
  *  because whether a date is day-first may only show later in the log. */
 export class TimeTrack {
   private readonly seconds = new GrowingFloats();
   private readonly dates: { readonly from: number; readonly date: WrittenDate }[] = [];
   private dateText = '';
+  /** The date cell of the row before, and what stood before its clock: where both are the same, so is the day. */
+  private dateCell: string | null = null;
+  private beforeClock = '';
   private offset: number | null = null;
 
   constructor(private readonly source: TimeSource) {}
 
   /** Takes the time of one row; false, and nothing taken, when the row has none. */
   take(cells: readonly string[]): boolean {
-    const cell = (cells[this.source.position] ?? '').trim();
+    const { position, datePosition } = this.source;
+    return this.takeText(cells[position] ?? '', datePosition === null ? '' : (cells[datePosition] ?? ''));
+  }
+
+  /** Takes a time by its cell and, for a clock with its date apart, that date's cell. */
+  takeText(timeCell: string, dateCell: string): boolean {
+    const cell = timeCell.trim();
     if (cell === '') return false;
     if (this.source.kind === 'number') {
       const value = parseNumber(cell, this.source.decimal);
       if (!Number.isFinite(value)) return false;
-      this.seconds.push(value * this.source.scale + this.source.shift);
+      this.takeNumber(value);
       return true;
     }
+    if (this.takeSameDay(cell, dateCell)) return true;
     let clockText = cell;
-    let dateText: string | null = null;
+    let dateText: string | null = dateCell.trim() === '' ? null : dateCell.trim();
     if (this.source.kind === 'stamp') {
       dateText = datePart(cell);
       if (dateText === null) return false;
       clockText = cell.slice(clockStart(cell));
-    } else if (this.source.datePosition !== null) {
-      dateText = (cells[this.source.datePosition] ?? '').trim();
-      if (dateText === '') dateText = null;
     }
     const clock = parseClock(clockText);
     if (!clock) return false;
@@ -58,9 +72,30 @@ export class TimeTrack {
       this.dates.push({ from: this.seconds.length, date });
     }
     this.offset ??= clock.offset;
+    this.dateCell = dateCell;
+    this.beforeClock = cell.slice(0, cell.length - clockText.length);
     const seconds = clock.parts === 2 && this.source.minutesFirst ? clock.seconds / 60 : clock.seconds;
     // A change of the UTC offset inside a log is summer time beginning or ending: only the written hour jumps.
     this.seconds.push(seconds - (clock.offset - this.offset));
+    return true;
+  }
+
+  /** Takes a time that is a number, in the unit of its column. */
+  takeNumber(value: number): void {
+    this.seconds.push(value * this.source.scale + this.source.shift);
+  }
+
+  /** The usual row: the date of the row before and a clock as hh:mm:ss, read without patterns. */
+  private takeSameDay(cell: string, dateCell: string): boolean {
+    if (this.dateCell !== dateCell || this.offset !== 0) return false;
+    const at = cell.length - 8;
+    if (at < 0 || at !== this.beforeClock.length || !cell.startsWith(this.beforeClock)) return false;
+    const hours = twoDigits(cell, at);
+    const minutes = twoDigits(cell, at + 3);
+    const seconds = twoDigits(cell, at + 6);
+    const colons = cell.charCodeAt(at + 2) === 58 && cell.charCodeAt(at + 5) === 58;
+    if (!colons || !(hours < 100 && minutes < 60 && seconds < 60)) return false;
+    this.seconds.push(hours * 3600 + minutes * 60 + seconds);
     return true;
   }
 
@@ -75,13 +110,14 @@ export class TimeTrack {
       return { seconds, dated: this.source.epoch, dateUnclear: null };
     }
     const possible = this.possibleOrders();
-    const order = possible.length === 1 ? possible[0] : (asked ?? null);
+    const same = this.dates.every(({ date }) => date.first === date.second);
+    const order = possible.length === 1 || same ? possible[0] : (asked ?? null);
     const days = this.dates.map(({ date }) => dayNumber(date, order ?? 'day first'));
     const dated = new Float64Array(seconds.length);
     for (let d = 0; d < days.length; d += 1) {
       const to = this.dates[d + 1]?.from ?? seconds.length;
       // Unclear on one day only: the day is the same in each reading, so the time inside the run is not in doubt.
-      for (let i = this.dates[d].from; i < to; i += 1) dated[i] = seconds[i] + days[d] * 86400;
+      for (let i = d === 0 ? 0 : this.dates[d].from; i < to; i += 1) dated[i] = seconds[i] + days[d] * 86400;
     }
     return { seconds: dated, dated: order !== null, dateUnclear: order === null ? this.dates[0].date : null };
   }
