@@ -29,8 +29,16 @@ export const pageQuerySchema = z.object({
   pageSize: z.coerce.number().int().min(1).max(200).default(50),
 });
 
+/** The form of one page of a list of `T`. */
+export type PageSchema<T extends z.ZodType> = z.ZodObject<{
+  items: z.ZodArray<T>;
+  page: z.ZodNumber;
+  pageSize: z.ZodNumber;
+  total: z.ZodNumber;
+}>;
+
 /** One page of a list. */
-export const pageOf = <T extends z.ZodType>(item: T) =>
+export const pageOf = <T extends z.ZodType>(item: T): PageSchema<T> =>
   z.object({ items: z.array(item), page: z.number(), pageSize: z.number(), total: z.number() });
 
 /**

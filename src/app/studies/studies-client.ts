@@ -1,6 +1,6 @@
 import { inject, Injectable } from '@angular/core';
 import { Observable } from 'rxjs';
-import { benchesSchema, coolersSchema } from '../../../shared/contracts/benches';
+import { Bench, benchesSchema, Cooler, coolersSchema } from '../../../shared/contracts/benches';
 import {
   AddStudyRequest,
   ChangeRunsRequest,
@@ -45,11 +45,11 @@ export class StudiesClient {
     return this.api.post(`/studies/${studyId}/verdicts`, request, verdictSchema);
   }
 
-  benches() {
+  benches(): Observable<{ benches: Bench[] }> {
     return this.api.get('/benches', benchesSchema);
   }
 
-  coolers() {
+  coolers(): Observable<{ coolers: Cooler[] }> {
     return this.api.get('/coolers', coolersSchema);
   }
 
