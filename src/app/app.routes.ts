@@ -31,12 +31,18 @@ export const routes: Routes = [
         title: 'Waiting',
         loadComponent: () => import('./studies/waiting/waiting').then((m) => m.WaitingPage),
       },
+      { path: 'studies/:id/intake', redirectTo: 'intake/:id' },
       { path: 'studies', loadChildren: () => import('./studies/studies.routes') },
       { path: 'verdicts', loadChildren: () => import('./verdicts/verdicts.routes') },
       {
         path: 'audit',
         canActivate: [requireRole('lead', 'auditor', 'administrator')],
         loadChildren: () => import('./audit/audit.routes'),
+      },
+      {
+        path: 'intake',
+        canActivate: [requireRole('analyst')],
+        loadChildren: () => import('./intake/intake.routes'),
       },
       { path: 'bench', loadChildren: () => import('./bench/bench.routes') },
       {

@@ -4,7 +4,7 @@ import { ChangeRunsRequest, Run, StudyCooler } from '../../../../shared/contract
 import { ApiProblem } from '../../core/api-problem';
 import { formatNumber } from '../../ui/quantity/quantity-format';
 import { StudiesClient } from '../studies-client';
-import { TraceSketchDrawing } from './trace-sketch-drawing';
+import { TraceSketchDrawing } from '../../ui/trace-sketch/trace-sketch-drawing';
 
 /** Every run of a condition by cooler and mount; several at once can be moved, left out with a reason, or put back. */
 @Component({
