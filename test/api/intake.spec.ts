@@ -110,7 +110,7 @@ test('the same log in two studies is two runs on bytes stored once', async () =>
 });
 
 test('a log of several megabytes is stored in parts and read back whole', async () => {
-  const padding = `${'x'.repeat(8000)}`;
+  const padding = `${'x'.repeat(16000)}`;
   const rows = logOf(40, 8).toString().trimEnd().split('\n');
   const bytes = Buffer.from(rows.map((row, index) => `${row},${index === 0 ? 'Note' : padding}`).join('\n'));
   expect(bytes.length).toBeGreaterThan(2 * 1024 * 1024);

@@ -2,6 +2,9 @@ import type { DataSource } from 'typeorm';
 import { createDataSource, migrate } from '../../server/db/data-source';
 import { createTestDatabase, type TestDatabase } from '../support/test-database';
 
+// Three servers at once on a busy machine take their time.
+jest.setTimeout(60_000);
+
 let database: TestDatabase;
 let db: DataSource;
 

@@ -3,14 +3,14 @@ import type { RunAssignment, Study } from '../../../shared/contracts';
 import type { Response } from 'supertest';
 import { call, type Agent } from './test-server';
 
-/** A made-up log: twelve minutes at `rise` °C over an ambient of about 22 °C after a short start, a reading every 2 s. */
+/** A made-up log: twelve minutes at `rise` °C over an ambient of about 22 °C after a short start, a reading every 4 s. */
 export function logOf(rise: number, seed: number, { watts = true } = {}): Buffer {
   let state = seed;
   // The minimal standard generator of Park and Miller (1988), from memory: any fixed scatter would do.
   const scatter = (): number => (state = (state * 48271) % 2147483647) / 2147483647 - 0.5;
   for (let warmUp = 0; warmUp < 5; warmUp += 1) scatter();
   const rows = ['Time (s),Heat source (°C),Ambient (°C)' + (watts ? ',Power (W)' : '')];
-  for (let second = 0; second < 720; second += 2) {
+  for (let second = 0; second < 720; second += 4) {
     const ambient = 22 + 0.1 * scatter();
     const source = ambient + rise - 30 * Math.exp(-second / 15) + 0.2 * scatter();
     const power = watts ? `,${(120 + scatter()).toFixed(1)}` : '';

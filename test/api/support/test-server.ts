@@ -17,6 +17,9 @@ import { FIRST_VALUES, storeThresholds } from '../../../server/thresholds/thresh
 import type { Role } from '../../../shared/contracts';
 import { createTestDatabase } from '../../support/test-database';
 
+// A machine that builds or tests other things at the same time is slow, not wrong.
+jest.setTimeout(60_000);
+
 export const SECRET = 'a secret of the tests, long enough to be one';
 export const PASSWORD = 'a long password';
 /** bcrypt's least: the tests are about who gets in, not about how slowly. */
