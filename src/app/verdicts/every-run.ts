@@ -1,7 +1,7 @@
 import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
 import { PairResult, Verdict } from '../../../shared/contracts';
 import { FigureMaker, Plot } from '../ui/plot/plot';
-import { decimalsFor, formatNumber } from '../ui/quantity/quantity-format';
+import { decimalsForGap, formatNumber } from '../ui/quantity/quantity-format';
 import { QuantityPipe } from '../ui/quantity/quantity-pipes';
 import { dotCoolers, dotPoints, dotsFigure, dotsHeight } from './run-dots';
 
@@ -22,19 +22,28 @@ export class EveryRun {
     return dotCoolers(judged, judgement, this.pair());
   });
   protected readonly unit = computed(() => this.verdict().unit);
+  /** As many as the pair's gap is given with, so that sentence, chart and table show the same means. */
+  private readonly decimals = computed(() =>
+    decimalsForGap(this.pair().gap, this.pair().marginOfError, this.unit()),
+  );
   protected readonly quantity = computed(() =>
     this.unit() === '°C' ? 'steady-window mean, °C over ambient' : 'steady-window mean, K/W',
   );
   protected readonly height = computed(() => dotsHeight(this.coolers()));
   protected readonly points = computed(() => dotPoints(this.coolers(), this.unit()));
   protected readonly figure = computed<FigureMaker>(() => {
-    const [coolers, unit, quantity] = [this.coolers(), this.unit(), this.quantity()];
-    return (theme, width) => dotsFigure(coolers, unit, quantity, theme, width);
+    const [coolers, unit, quantity, decimals] = [
+      this.coolers(),
+      this.unit(),
+      this.quantity(),
+      this.decimals(),
+    ];
+    return (theme, width) => dotsFigure(coolers, unit, quantity, decimals, theme, width);
   });
   protected readonly label = computed(() => {
     const means = this.coolers()
       .filter(({ mean }) => mean !== null)
-      .map(({ name, mean }) => `${name} ${formatNumber(mean ?? 0, decimalsFor(null, this.unit()))}`);
+      .map(({ name, mean }) => `${name} ${formatNumber(mean ?? 0, this.decimals())}`);
     return `Every run by mount, in ${this.unit()}. Means: ${means.join(', ')}. The table below the chart holds the same figures.`;
   });
   protected readonly note = computed(() => {

@@ -23,7 +23,7 @@ describe('every run as a dot', () => {
   });
 
   it('tells the coolers apart by shape', () => {
-    const { data } = dotsFigure(dotCoolers(input, judgement, pair), '°C', '', PAPER_THEME, 800);
+    const { data } = dotsFigure(dotCoolers(input, judgement, pair), '°C', '', 2, PAPER_THEME, 800);
     const symbols = (data as unknown as Trace[])
       .filter(({ x }) => x.length > 0)
       .map(({ marker }) => marker.symbol);
@@ -36,7 +36,7 @@ describe('every run as a dot', () => {
       { cooler: 'Bare fins', mount: '1', run: { ...run, name: '3', value: 43.1 }, reason: 'Fan clip loose' },
     ];
     const coolers = dotCoolers({ ...input, leftOut }, judgement, pair);
-    const traces = dotsFigure(coolers, '°C', '', PAPER_THEME, 800).data as unknown as Trace[];
+    const traces = dotsFigure(coolers, '°C', '', 2, PAPER_THEME, 800).data as unknown as Trace[];
     expect(traces[0].x).toEqual([42.56, 42.38]);
     expect(traces[1]).toMatchObject({ x: [43.1], marker: { symbol: 'x-thin' } });
     expect(traces[1].text[0]).toContain('left out: Fan clip loose');
@@ -44,7 +44,7 @@ describe('every run as a dot', () => {
 
   it('gives the arrow keys the trace and place each dot has in the figure', () => {
     const coolers = dotCoolers(input, judgement, pair);
-    const traces = dotsFigure(coolers, '°C', '', PAPER_THEME, 800).data as unknown as Trace[];
+    const traces = dotsFigure(coolers, '°C', '', 2, PAPER_THEME, 800).data as unknown as Trace[];
     const points = dotPoints(coolers, '°C');
     expect(points).toHaveLength(20);
     for (const { curve, index, words } of points) expect(traces[curve].text[index]).toBe(words);
@@ -53,7 +53,9 @@ describe('every run as a dot', () => {
 
   it('does not let a name pass for a tag of the chart library', () => {
     const named = dotCoolers(input, judgement, pair).map((cooler) => ({ ...cooler, name: '<b>A & B' }));
-    const texts = dotsFigure(named, '°C', '', PAPER_THEME, 800).layout.annotations?.map(({ text }) => text);
+    const texts = dotsFigure(named, '°C', '', 2, PAPER_THEME, 800).layout.annotations?.map(
+      ({ text }) => text,
+    );
     expect(texts).toContain('<b>&lt;b&gt;A &amp; B</b>');
   });
 

@@ -98,6 +98,7 @@ export function dotsFigure(
   coolers: readonly DotCooler[],
   unit: Unit,
   quantity: string,
+  decimals: number,
   theme: ChartTheme,
   width: number,
 ): Figure {
@@ -133,7 +134,7 @@ export function dotsFigure(
       annotations.push({
         x: cooler.mean,
         y: top - 18,
-        text: `<b>mean ${formatNumber(cooler.mean, decimalsFor(null, unit))}</b>`,
+        text: `<b>mean ${formatNumber(cooler.mean, decimals)}</b>`,
         showarrow: false,
         font: { size: 12, color: colour, family: theme.font },
       });

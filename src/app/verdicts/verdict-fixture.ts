@@ -86,7 +86,7 @@ export const FIN_PAIR_RESULT: PairResult = {
     unit: 'mount',
     units: 10,
     tips: 6,
-    which: ['Coated fins 1', 'Coated fins 3', 'Coated fins 5', 'Bare fins 1', 'Bare fins 3', 'Bare fins 5'],
+    which: [1, 3, 5].flatMap((mount) => [`Coated fins, mount ${mount}`, `Bare fins, mount ${mount}`]),
   },
 };
 

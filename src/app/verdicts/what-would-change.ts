@@ -58,7 +58,7 @@ export class WhatWouldChange {
     if (leaveOneOut === null) return null;
     const { unit, units, tips, which } = leaveOneOut;
     if (tips === 0) return `Leaving out any single ${unit} of the ${units} keeps the call.`;
-    const named = which.length > 0 ? `: ${which.join(', ')}` : '';
+    const named = which.length > 0 ? `: ${which.join('; ')}` : '';
     return `Leaving out any one of ${tips} of the ${units} ${unit}s would change the call${named}.`;
   });
 }
