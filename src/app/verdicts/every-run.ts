@@ -3,7 +3,8 @@ import { PairResult, Verdict } from '../../../shared/contracts';
 import { FigureMaker, Plot } from '../ui/plot/plot';
 import { decimalsForGap, formatNumber } from '../ui/quantity/quantity-format';
 import { QuantityPipe } from '../ui/quantity/quantity-pipes';
-import { dotCoolers, dotPoints, dotsFigure, dotsHeight } from './run-dots';
+import { dotCoolers, dotPoints } from './run-dots';
+import { dotsFigure, dotsHeight } from './run-dots-figure';
 
 /** Every run as a dot by cooler and mount, and the same as a table. */
 @Component({

@@ -1,5 +1,6 @@
 import { PAPER_THEME } from '../ui/plot/chart-theme';
-import { dotCoolers, dotPoints, dotsFigure, mountInWords } from './run-dots';
+import { dotCoolers, dotPoints, mountInWords } from './run-dots';
+import { dotsFigure } from './run-dots-figure';
 import { finVerdict } from './verdict-fixture';
 
 interface Trace {

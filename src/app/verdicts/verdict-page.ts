@@ -34,6 +34,7 @@ import { LifeSteps } from './life-steps';
 import { mediaMatches } from './media-matches';
 import { Numbers } from './numbers';
 import { PairTable } from './pair-table';
+import { findingsByPair } from './pair-findings';
 import { Provenance } from './provenance';
 import { questionFor } from './questions';
 import { Quote } from './quote';
@@ -128,7 +129,12 @@ export class VerdictPage {
   protected readonly coolers = computed(
     () => this.verdict()?.judgement.coolers.map(({ name }) => name) ?? [],
   );
-  protected readonly findingCounts = computed(() => countsInWords(this.verdict()?.judgement.findings ?? []));
+  protected readonly found = computed(() => {
+    const judgement = this.verdict()?.judgement;
+    return findingsByPair(judgement?.findings ?? [], judgement?.pairs ?? [], this.pairIndex());
+  });
+  protected readonly findingCounts = computed(() => countsInWords(this.found().here));
+  protected readonly elsewhereCounts = computed(() => countsInWords(this.found().elsewhere));
   protected readonly rulePair = computed<GapRulePair | null>(() => {
     const [verdict, pair] = [this.verdict(), this.result()];
     return verdict && pair && { ...pair, unit: verdict.unit, notJudgedCode: pair.notJudged?.code ?? null };

@@ -22,17 +22,19 @@ export class WhatWouldChange {
   readonly pair = input.required<PairResult>();
 
   protected readonly unit = computed(() => this.verdict().unit);
+  /** As many as the gap itself is given with. */
+  private readonly decimals = computed(() =>
+    decimalsForGap(this.pair().gap, this.pair().marginOfError, this.unit()),
+  );
   protected readonly rows = computed(() => {
     const { more } = this.pair();
-    const decimals = Math.min(...more.map(({ marginOfError }) => marginOfError), Infinity);
-    const places = decimalsFor(Number.isFinite(decimals) ? decimals * 10 : null, this.unit());
     return more.map((row, index) => ({
       who: [row.mounts === null ? null : plural(row.mounts, 'mount'), plural(row.runs, 'run')]
         .filter((words) => words !== null)
         .join(', '),
       now: index === 0,
       added: index === 0 ? '' : `+${2 * (row.runs - more[0].runs)}`,
-      margin: formatPlusMinus(row.marginOfError, places),
+      margin: formatPlusMinus(row.marginOfError, this.decimals()),
       ratio: formatRatio(row.clearance),
     }));
   });
@@ -40,9 +42,8 @@ export class WhatWouldChange {
   protected readonly visible = computed(() => {
     const { smallestVisibleGap, gapThatMatters } = this.pair();
     if (smallestVisibleGap === null) return null;
-    const decimals = decimalsForGap(null, smallestVisibleGap, this.unit());
-    const seen = withUnit(formatNumber(smallestVisibleGap, decimals), this.unit());
-    const matters = withUnit(formatNumber(gapThatMatters, decimals), this.unit());
+    const seen = withUnit(formatNumber(smallestVisibleGap, this.decimals()), this.unit());
+    const matters = withUnit(formatNumber(gapThatMatters, decimalsFor(null, this.unit())), this.unit());
     const often = oftenInWords(this.verdict().thresholds.values.power);
     const enough = smallestVisibleGap <= gapThatMatters;
     return (

@@ -6,6 +6,7 @@ describe('axis of a chart', () => {
       range: [40.5, 43],
       labelEvery: 0.5,
       minorEvery: 0.1,
+      decimals: 1,
       format: '.1f',
     });
   });

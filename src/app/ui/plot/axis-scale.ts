@@ -4,6 +4,7 @@ export interface AxisScale {
   /** Between labels. */
   readonly labelEvery: number;
   readonly minorEvery: number;
+  readonly decimals: number;
   /** d3 format of the labels. */
   readonly format: string;
 }
@@ -28,5 +29,5 @@ export function axisScale(values: readonly number[], pixels: number, smallestTic
   const multiple = [5, 10, 20, 50].find((tenths) => (pixelsPerFive * tenths) / 5 >= CLOSEST_LABELS) ?? 100;
   const labelEvery = multiple * minor;
   const decimals = Math.max(0, -Math.floor(Math.log10(labelEvery) + 1e-9));
-  return { range: [from, to], labelEvery, minorEvery: minor, format: `.${decimals}f` };
+  return { range: [from, to], labelEvery, minorEvery: minor, decimals, format: `.${decimals}f` };
 }
