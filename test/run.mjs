@@ -29,8 +29,12 @@ const all = ['lint', ...quick, ...alone];
 
 const progress = createProgress();
 let database = null;
+let ending = false;
 
 async function end(code) {
+  // Stopped by a signal, the suites fail on their way out; the signal's exit code stands.
+  if (ending) return;
+  ending = true;
   await stopChildren();
   await database?.release();
   process.exit(code);
@@ -120,7 +124,11 @@ async function runSuites(wanted) {
   return summary(suites);
 }
 
-whenToStop(end);
+// A run cut short has no result: nothing that could be read as one may follow.
+whenToStop((code) => {
+  progress.close('Stopped before the end.');
+  return end(code);
+});
 try {
   const { values, positionals } = parseArgs({
     allowPositionals: true,

@@ -2,7 +2,7 @@
 import { existsSync, readFileSync, rmSync } from 'node:fs';
 import { join, relative, sep } from 'node:path';
 import { root, runFolder } from '../../server/cli/house/places.mjs';
-import { run, stopChildren } from '../../server/cli/house/processes.mjs';
+import { run } from '../../server/cli/house/processes.mjs';
 
 /** A run that hangs (a server that never answers) is ended rather than waited for. */
 const PATIENCE_MS = 15 * 60_000;
@@ -45,16 +45,12 @@ export async function runJest(projects, options, environment, progress) {
   const report = join(runFolder('test'), `jest-${projects[0]}.json`);
   rmSync(report, { force: true });
   const command = ['node_modules/jest/bin/jest.js', '--selectProjects', ...projects, '--passWithNoTests'];
-  const patience = setTimeout(() => {
-    progress.say(`Jest did not end within ${PATIENCE_MS / 60_000} minutes: ending it.`);
-    void stopChildren();
-  }, PATIENCE_MS);
   const { code } = await run(process.execPath, [...command, ...options, '--json', `--outputFile=${report}`], {
     cwd: root,
+    timeoutMs: PATIENCE_MS,
     env: { ...process.env, ...environment, FORCE_COLOR: '0' },
     onOutput: (piece) => process.stdout.write(piece),
   });
-  clearTimeout(patience);
   const suites = new Map(projects.map((name) => [name, empty(name)]));
   if (existsSync(report)) {
     for (const file of JSON.parse(readFileSync(report, 'utf8')).testResults)

@@ -5,12 +5,15 @@
 import { spawn } from 'node:child_process';
 
 const running = new Set();
+let stopping = false;
 
 /**
  * Starts a child that `stopChildren` will stop.
  * @param options.patienceMs how long it may take to stop when asked; installs and builds hold nothing worth waiting for
  */
 export function start(command, args, { patienceMs = 700, ...options } = {}) {
+  // Whoever was waiting for a child that we stopped must not go on with the next one.
+  if (stopping) throw new Error('Stopping.');
   const child = spawn(command, args, { detached: true, stdio: 'ignore', ...options });
   child.patienceMs = patienceMs;
   running.add(child);
@@ -22,10 +25,11 @@ export function start(command, args, { patienceMs = 700, ...options } = {}) {
 /**
  * Runs a command to its end.
  * @param options.onOutput gets every piece of output; without it the output is only collected
+ * @param options.timeoutMs after this long it is stopped
  * @returns exit code (or signal name) and all output, standard output and error as they came
  * @throws when the command cannot be started at all
  */
-export function run(command, args, { onOutput, input, ...options } = {}) {
+export function run(command, args, { onOutput, input, timeoutMs, ...options } = {}) {
   return new Promise((resolve, reject) => {
     const stdio = [input === undefined ? 'ignore' : 'pipe', 'pipe', 'pipe'];
     const child = start(command, args, { ...options, stdio });
@@ -37,8 +41,12 @@ export function run(command, args, { onOutput, input, ...options } = {}) {
     child.stdout.on('data', take);
     child.stderr.on('data', take);
     if (input !== undefined) child.stdin.end(input);
+    const patience = timeoutMs ? setTimeout(() => void stop(child), timeoutMs) : undefined;
     child.once('error', reject);
-    child.once('close', (code, signal) => resolve({ code: code ?? signal, output }));
+    child.once('close', (code, signal) => {
+      clearTimeout(patience);
+      resolve({ code: code ?? signal, output });
+    });
   });
 }
 
@@ -66,5 +74,8 @@ export function stop(child) {
   });
 }
 
-/** Stops everything started here. */
-export const stopChildren = () => Promise.all([...running].map((child) => stop(child)));
+/** Stops everything started here, for good: nothing more is started. */
+export function stopChildren() {
+  stopping = true;
+  return Promise.all([...running].map((child) => stop(child)));
+}
