@@ -22,8 +22,8 @@ const isClockColumn = (column: TableColumn): boolean =>
   column.mostly === 'time' && isShare(column, (text) => parseClock(text) !== null);
 const isDateColumn = (column: TableColumn): boolean => isShare(column, (text) => parseDate(text) !== null);
 
-/** Whether numbers never fall and rise somewhere: what a time does. One fall is a restart and is let through. */
-function keepsRising(values: readonly number[]): boolean {
+/** Whether numbers go one way, as time does: up, or down where the newest comes first. One turn is a restart. */
+function goesOneWay(values: readonly number[]): boolean {
   const numbers = values.filter((value) => Number.isFinite(value));
   let falls = 0;
   let rises = 0;
@@ -31,7 +31,7 @@ function keepsRising(values: readonly number[]): boolean {
     if (numbers[i] < numbers[i - 1]) falls += 1;
     else if (numbers[i] > numbers[i - 1]) rises += 1;
   }
-  return falls <= 1 && rises > 0;
+  return falls + rises > 0 && Math.min(falls, rises) <= 1;
 }
 
 const base = { scale: 1, shift: 0, epoch: false, minutesFirst: false, datePosition: null } as const;
@@ -139,7 +139,7 @@ export function findTime(columns: readonly TableColumn[]): FoundTime | null {
         (column.unit?.quantity === 'time' ? 3 : 0) -
         (column.unit && column.unit.quantity !== 'time' ? 20 : 0),
     }))
-    .filter(({ column, score }) => score >= 3 && keepsRising(sampleNumbers(column)))
+    .filter(({ column, score }) => score >= 3 && goesOneWay(sampleNumbers(column)))
     .sort((a, b) => b.score - a.score || a.column.position - b.column.position);
   if (numeric.length > 0) return numericTime(numeric[0].column);
   const stamp = columns.find(isStampColumn);

@@ -1,8 +1,8 @@
-import { ColumnMap, FoundColumn } from '../contracts/run-summary';
+import { ColumnMap, ColumnRole, FoundColumn } from '../contracts/run-summary';
 import { settleCandidates } from './behaviour';
 import { isoFromSeconds } from './calendar';
 import { Collector } from './collector';
-import { FoundColumns, ROLE_KEYS } from './find-columns';
+import { FoundColumns, ROLE_KEYS, ROLE_NAMES } from './find-columns';
 import { FoundTime } from './find-time';
 import { Head } from './head';
 import { Log, ReadLog, ReadingOptions } from './log';
@@ -12,7 +12,7 @@ import { TableColumn } from './table-column';
 import { TimeAxis, settleAxis } from './time-axis';
 import { SettledTimes } from './time-source';
 import { doubtOf } from './time-doubts';
-import { fixed } from './words';
+import { count, fixed, quoted } from './words';
 
 /** What reading a log has found out before its end. */
 export interface ReadTable {
@@ -95,6 +95,48 @@ function axisOf(
   return null;
 }
 
+function tellNoTime({ head, columns, options, problems }: ReadTable): void {
+  const asked = options.columnMap?.time ?? null;
+  const chosen = asked === null ? undefined : columns[asked];
+  if (chosen) {
+    problems.add(
+      'no-time',
+      `This column was chosen for time, but its cells are no times; the first is ${quoted(chosen.firstReading)}. Expected seconds since the start, a clock, or a date and clock.`,
+      head.firstDataRow,
+      columnHeader(chosen),
+    );
+    return;
+  }
+  problems.add(
+    'no-time',
+    'No column holds the time. Expected seconds since the start, a clock, or a date and clock; choose the column, or export the log with one.',
+    head.headerRow,
+  );
+}
+
+/** Takes out columns that hold hardly a reading, and says what they hold instead. */
+function withoutEmptyColumns(table: ReadTable, collector: Collector, map: ColumnMap): ColumnMap {
+  const usable = { ...map };
+  for (const [role, key] of Object.entries(ROLE_KEYS)) {
+    const kept = collector.kept.find(({ column }) => column.position === map[key]);
+    if (role === 'time' || !kept) continue;
+    const total = collector.rows.length;
+    const empty = kept.blankCount + kept.badCount === total;
+    if (!empty && kept.badCount <= total / 2) continue;
+    const example = kept.bad[0] ?? kept.firstBlank;
+    const holds =
+      example.text.trim() === '' ? 'its cells are empty' : `row ${example.row} holds ${quoted(example.text)}`;
+    table.problems.add(
+      `${role.replace(' ', '-')}-unreadable`,
+      `Expected numbers for the ${ROLE_NAMES[role as ColumnRole]}, but ${holds}${empty ? ', and no row has a number' : `, and ${count(kept.badCount, 'row')} of ${count(total, 'row')} are no numbers`}. Choose another column, or check the sensor.`,
+      example.row,
+      columnHeader(kept.column),
+    );
+    usable[key] = null;
+  }
+  return usable;
+}
+
 function tellUnclearDate(table: ReadTable, time: FoundTime, settled: SettledTimes): void {
   if (!settled.dateUnclear) return;
   const { first, second, year } = settled.dateUnclear;
@@ -110,13 +152,7 @@ function tellUnclearDate(table: ReadTable, time: FoundTime, settled: SettledTime
 export function finishLog(table: ReadTable, collector: Collector | null): ReadLog {
   const { head, columns, found, problems, options } = table;
   if (!found.time || !collector) {
-    if (problems.list.length === 0) {
-      problems.add(
-        'no-time',
-        'No column holds the time. Expected seconds since the start, a clock, or a date and clock; choose the column, or export the log with one.',
-        head.headerRow,
-      );
-    }
+    if (problems.list.length === 0) tellNoTime(table);
     return withoutReadings(table);
   }
   const settled = collector.track.settle(options.dateOrder);
@@ -144,7 +180,7 @@ export function finishLog(table: ReadTable, collector: Collector | null): ReadLo
   if (doubt) problems.add('time-unit-unclear', doubt, head.headerRow, columnHeader(timeColumn));
   tellUnclearDate(table, found.time, settled);
   const rows = pick(collector.rows.view());
-  const fullMap: ColumnMap = { ...map, time: doubt ? null : timeColumn.position };
+  const fullMap = withoutEmptyColumns(table, collector, { ...map, time: doubt ? null : timeColumn.position });
   return {
     log: {
       ...describe(table, fullMap, reasons),

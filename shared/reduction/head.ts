@@ -35,6 +35,7 @@ export interface HeadFault {
     | 'one column'
     | 'quote left open'
     | 'comma twice'
+    | 'rows in quotes'
     | 'too many columns';
   readonly row: number | null;
   readonly cells: number;
@@ -172,6 +173,13 @@ function commaTwice(delimiter: string, header: Row | null, rows: readonly Row[])
   return whole && wider > 0.8 * widths.length && Math.max(...widths) <= 2 * names;
 }
 
+/** Whether whole rows stand in quotes, as when a table was pasted into one column of a spreadsheet. */
+function rowsInQuotes(text: string, newline: string): boolean {
+  const lines = text.split(newline, 20).map((line) => line.trim());
+  const whole = lines.filter((line) => /^"[^"]*[,;\t][^"]*"$/.test(line));
+  return whole.length >= 3 && whole.length > lines.length / 2;
+}
+
 /**
  * Finds delimiter, header, units and first readings.
  * @param text the log's first lines, complete but perhaps for the last one where the file ends there
@@ -195,6 +203,7 @@ export function findHead(text: string): Head | HeadFault {
     const used = DELIMITERS.filter((candidate) => text.includes(candidate));
     const open = splitRows(firstLines(text, newline), used[0] ?? ',', newline).openQuote;
     if (open !== null) return fault('quote left open', open);
+    if (rowsInQuotes(text, newline)) return fault('rows in quotes', 1);
     return fault(used.length > 0 ? 'no readings' : 'one column');
   }
   const { rows, openQuote } = splitRows(text, delimiter, newline);

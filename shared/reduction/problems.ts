@@ -15,6 +15,8 @@ const FAULT_TEXTS: Readonly<Record<HeadFault['fault'], (cells: number) => string
     'A quote mark opens in this row and is never closed, so the rows after it run together. Close or remove it, or export the log again.',
   'comma twice': () =>
     'Commas both separate the columns and mark the decimals, so the cells cannot be told apart. Export the log with semicolons or tabs between columns, or with decimal points.',
+  'rows in quotes': () =>
+    'Each row stands in quotes as a whole, so it reads as one cell. The table was probably pasted into one column of a spreadsheet; export it from the logger again, or take the outer quotes away.',
   'too many columns': (cells) =>
     `${count(cells, 'column')} in one row; a log may have up to 1,000. Export fewer channels, or check that rows end in line breaks.`,
 };

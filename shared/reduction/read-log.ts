@@ -43,21 +43,23 @@ class LogReader implements LogReading {
 
   write(bytes: Uint8Array): void {
     for (let at = 0; at < bytes.length && !this.stopped; at += AT_ONCE) {
-      const part = bytes.subarray(at, at + AT_ONCE);
-      if (this.table) this.tell(this.table.body?.take(part, false) ?? null);
-      else this.hold(part);
+      this.hold(bytes.subarray(at, at + AT_ONCE));
+      if (this.heldBytes < HEAD_BYTES) continue;
+      if (this.table) this.passOn(false);
+      else if (this.heldBytes >= Math.min(2 * this.triedAt, HEAD_AT_MOST)) this.beginTable(false);
     }
   }
 
   end(): ReadLog {
     if (!this.stopped && !this.table) this.beginTable(true);
-    if (!this.stopped) this.tell(this.table?.body?.take(new Uint8Array(0), true) ?? null);
+    if (!this.stopped) this.passOn(true);
     if (this.stopped || !this.table) return { log: null, problems: this.problems.list };
     const { head, columns, found, encoding, collector } = this.table;
     const { problems, options } = this;
     return finishLog({ head, columns, found, encoding, problems, options }, collector);
   }
 
+  /** Small chunks are gathered first: a line or quote left open would else be looked through again for each of them. */
   private hold(part: Uint8Array): void {
     if (this.heldBytes + part.length > this.held.length) {
       const larger = new Uint8Array(2 * (this.heldBytes + part.length));
@@ -66,7 +68,13 @@ class LogReader implements LogReading {
     }
     this.held.set(part, this.heldBytes);
     this.heldBytes += part.length;
-    if (this.heldBytes >= HEAD_BYTES && this.heldBytes >= 2 * this.triedAt) this.beginTable(false);
+  }
+
+  /** Hands the held bytes to the reader of rows. */
+  private passOn(last: boolean): void {
+    const fault = this.table?.body?.take(this.held.subarray(0, this.heldBytes), last) ?? null;
+    this.heldBytes = 0;
+    this.tell(fault);
   }
 
   /** Finds the table in the bytes held so far, once there are enough of them. */
@@ -105,8 +113,10 @@ class LogReader implements LogReading {
       : null;
     const body = collector ? bodyOf(head, collector, encoding) : null;
     this.table = { head, columns, found, encoding, collector, body };
-    this.held = new Uint8Array(0);
-    this.tell(body?.take(bytes.subarray(startOfRow(bytes, head, encoding)), false) ?? null);
+    const from = startOfRow(bytes, head, encoding);
+    this.held.copyWithin(0, from, this.heldBytes);
+    this.heldBytes -= from;
+    this.passOn(false);
   }
 
   private columnsOf(head: Head, columns: readonly TableColumn[]): FoundColumns {

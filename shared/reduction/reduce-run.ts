@@ -32,7 +32,7 @@ export interface RunChoices {
 }
 
 export interface ReducedRun {
-  /** null when something is missing; `problems` then says what. */
+  /** null when something is missing; `problems` then says what, or those of reading the log did. */
   readonly summary: RunSummary | null;
   readonly sketch: TraceSketch;
   readonly problems: LogProblem[];
@@ -154,6 +154,8 @@ function windowOf(trace: Rise, choices: RunChoices, problems: Problems): FoundWi
  */
 export function reduceRun(log: Log, choices: RunChoices): ReducedRun {
   const problems = new Problems(log.fileName);
+  // A log whose time could not be read has said so already.
+  if (log.seconds.length === 0) return { summary: null, sketch: NO_SKETCH, problems: [] };
   const { heat, ambient, watts, fan } = columnsFor(log, choices, problems);
   if (problems.list.length > 0 || !heat) return { summary: null, sketch: NO_SKETCH, problems: problems.list };
   const trace = formRise(log.seconds, heat, ambient ?? choices.fixedAmbient ?? NaN);

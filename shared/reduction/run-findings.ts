@@ -14,6 +14,9 @@ const FAN_STANDS = 60;
 /** A sensor whose step is at least this coarse is said to be, °C. */
 const COARSE_STEP = 0.5;
 
+/** A finely stepped sensor that does not move for this long, and for half the window, may be stuck, s. */
+const STANDSTILL = 300;
+
 const finding = (code: string, level: FindingLevel, text: string, atSeconds: number | null): RunFinding => ({
   code,
   level,
@@ -189,6 +192,32 @@ function load({
   return found;
 }
 
+/** Values that say a column was mistaken for another. */
+function plausibility({ rise, watts: power, window }: RunFacts): RunFinding[] {
+  const found: RunFinding[] = [];
+  if (rise <= 0) {
+    found.push(
+      finding(
+        'rise-not-positive',
+        'stop',
+        `The heat source reads ${celsius(-rise)} below ambient. The two columns may be swapped, or the heater was off; choose the columns again.`,
+        window.from,
+      ),
+    );
+  }
+  if (power && power.mean <= 0) {
+    found.push(
+      finding(
+        'no-heat-load',
+        'caution',
+        `The heat load reads ${watts(power.mean)} in the steady window, so there is no resistance. Choose another column for it, or check the meter.`,
+        window.from,
+      ),
+    );
+  }
+  return found;
+}
+
 /** Holes in the trace: the widest is told with its place, the others counted. */
 function holes({ trace, window, hole }: RunFacts): RunFinding[] {
   let widest = { from: 0, length: 0 };
@@ -221,44 +250,56 @@ function holes({ trace, window, hole }: RunFacts): RunFinding[] {
   ];
 }
 
-function sensor({ heatSource, sensorStep, window, log, choices, trace, from, to }: RunFacts): RunFinding[] {
+/** Longest stretch of one and the same heat-source reading inside the window, s. */
+function longestStandstill({ trace, from, to }: RunFacts, heat: Float64Array): { from: number; to: number } {
+  let longest = { from: trace.seconds[from], to: trace.seconds[from] };
+  let start = from;
+  for (let i = from + 1; i <= to; i += 1) {
+    if (heat[trace.at[i]] !== heat[trace.at[start]]) start = i;
+    if (trace.seconds[i] - trace.seconds[start] > longest.to - longest.from) {
+      longest = { from: trace.seconds[start], to: trace.seconds[i] };
+    }
+  }
+  return longest;
+}
+
+function sensor(facts: RunFacts): RunFinding[] {
+  const { heatSource, sensorStep, window, log, choices } = facts;
   const position = (choices.columnMap ?? log.columnMap).heatSource;
   const heat = position === null ? undefined : log.kept.get(position);
   if (!heat) return [];
-  const different = new Set<number>();
-  for (let i = from; i <= to && different.size < 3; i += 1) different.add(heat[trace.at[i]]);
-  const step = sensorStep ?? Infinity;
-  if (different.size === 1 && step < COARSE_STEP) {
-    return [
-      finding(
-        'sensor-stuck',
-        'caution',
-        `The heat source reads exactly ${celsius(heatSource.mean, 2)} all through the steady window, though the sensor shows steps of ${celsius(step, step < 0.1 ? 2 : 1)}. It may be stuck.`,
-        window.from,
-      ),
-    ];
-  }
-  if (different.size === 1) {
+  if (heatSource.lowest === heatSource.highest && (sensorStep === null || sensorStep >= COARSE_STEP)) {
+    const steps = sensorStep === null ? ' and the log' : `; its steps are ${celsius(sensorStep)}`;
     return [
       finding(
         'sensor-coarse',
         'caution',
-        `The heat source reads ${celsius(heatSource.mean)} all through the steady window${sensorStep === null ? ' and the log' : `; its steps are ${celsius(step)}`}. Differences smaller than that step cannot show.`,
+        `The heat source reads ${celsius(heatSource.mean)} all through the steady window${steps}. Differences smaller than a step cannot show.`,
         window.from,
       ),
     ];
   }
-  if (step >= COARSE_STEP && Number.isFinite(step)) {
+  if (sensorStep !== null && sensorStep >= COARSE_STEP) {
     return [
       finding(
         'sensor-coarse',
         'note',
-        `The heat-source sensor reads in steps of ${celsius(step)}. The mean is finer than that only as far as noise moves it between steps.`,
+        `The heat-source sensor reads in steps of ${celsius(sensorStep)}. The mean is finer than that only as far as noise moves it between steps.`,
         null,
       ),
     ];
   }
-  return [];
+  const still = longestStandstill(facts, heat);
+  if (sensorStep === null || still.to - still.from < Math.max(STANDSTILL, (window.to - window.from) / 2))
+    return [];
+  return [
+    finding(
+      'sensor-stuck',
+      'caution',
+      `The heat source reads one and the same value from ${clock(still.from)} to ${clock(still.to)}, though the sensor shows steps of ${celsius(sensorStep, sensorStep < 0.1 ? 2 : 1)}. It may be stuck.`,
+      still.from,
+    ),
+  ];
 }
 
 function averaging({ weighing, window }: RunFacts): RunFinding[] {
@@ -276,5 +317,5 @@ function averaging({ weighing, window }: RunFacts): RunFinding[] {
 
 /** The checks of one run, each with time, values and plain consequence. */
 export function runFindings(facts: RunFacts): RunFinding[] {
-  return [settling, ambient, load, holes, sensor, averaging].flatMap((check) => check(facts));
+  return [plausibility, settling, ambient, load, holes, sensor, averaging].flatMap((check) => check(facts));
 }

@@ -23,6 +23,8 @@ export interface TimeFault {
 
 const DAY = 86400;
 const HALF_DAY = 43200;
+/** A log may be begun anew or have its clock set back a few times; beyond that its rows are in no order. */
+const MOST_FALLS = 8;
 /** Rows at the end whose time falls back are a block of totals, not readings. */
 const TOTALS = 8;
 
@@ -69,7 +71,7 @@ export function settleAxis(
       atSeconds: null,
     });
   }
-  if (falls.length > 20) return { fault: 'out of order', falls: falls.length, at: falls[0] };
+  if (falls.length > MOST_FALLS) return { fault: 'out of order', falls: falls.length, at: falls[0] };
   const step = usualStep(seconds);
   let from = 0;
   let to = seconds.length;
