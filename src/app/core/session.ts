@@ -15,6 +15,9 @@ import { Api } from './api';
 
 const signedInAnswer = z.object({ account: accountSchema });
 
+/** Tells that this browser was signed in, so that a fresh page does not ask to renew a session that never was. */
+const BEEN_IN = 'tenthmark.been-in';
+
 type DemoSignIn = Extract<SessionAnswer, { state: 'signed out' }>['demo'][number];
 
 /**
@@ -47,7 +50,7 @@ export class Session {
     await firstValueFrom(
       this.ask().pipe(
         switchMap((answer) =>
-          answer.state === 'signed out'
+          answer.state === 'signed out' && wasIn()
             ? this.renew().pipe(switchMap((renewed) => (renewed ? this.ask() : of(answer))))
             : of(answer),
         ),
@@ -82,17 +85,39 @@ export class Session {
 
   /** Forgets who was here; the next page asks again. */
   ended(): void {
+    remember(false);
     this.answer.set(null);
   }
 
   private enter(path: string, request: unknown): Observable<Account> {
     return this.api.post(path, request, signedInAnswer).pipe(
       map(({ account }) => account),
-      tap((account) => this.answer.set({ state: 'signed in', account })),
+      tap((account) => {
+        remember(true);
+        this.answer.set({ state: 'signed in', account });
+      }),
     );
   }
 
   private ask(): Observable<SessionAnswer> {
     return this.api.get('/session', sessionSchema);
+  }
+}
+
+// Storage can be closed to us; a page then asks the server, which is only slower.
+function wasIn(): boolean {
+  try {
+    return localStorage.getItem(BEEN_IN) !== null;
+  } catch {
+    return true;
+  }
+}
+
+function remember(isIn: boolean): void {
+  try {
+    if (isIn) localStorage.setItem(BEEN_IN, '1');
+    else localStorage.removeItem(BEEN_IN);
+  } catch {
+    // As above.
   }
 }

@@ -19,7 +19,7 @@ import { WaitingFor } from '../ui/loading/waiting-for';
 import { BatchTicks } from './batch-ticks';
 import { BulkBar } from './bulk-bar/bulk-bar';
 import { needsALook } from './dropped-log';
-import { IntakeStore } from './intake-store';
+import { IntakeStore, OrderOfTesting } from './intake-store';
 import { HoldsLogs } from './leave-guard';
 import { LogDetail } from './log-detail/log-detail';
 import { LogReaders } from './log-readers';
@@ -51,6 +51,7 @@ export class IntakePage implements HoldsLogs {
   private readonly chooser = viewChild<ElementRef<HTMLInputElement>>('chooser');
   private readonly bulk = viewChild(BulkBar);
 
+  protected readonly orders: readonly OrderOfTesting[] = ['by their clocks', 'as listed', 'not known'];
   readonly id = input.required<string>();
   protected readonly setUp = load(() =>
     forkJoin({ study: this.client.study(this.id()), runs: this.client.runs(this.id()) }),

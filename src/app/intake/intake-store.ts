@@ -9,6 +9,11 @@ import { LogReaders } from './log-readers';
 
 const NO_CHOICES: LogChoices = { columnMap: null, fixedAmbient: null, window: null, nominalWatts: null };
 
+/** How the order of testing is known. */
+export type OrderOfTesting = 'by their clocks' | 'as listed' | 'not known';
+
+const startOf = (log: DroppedLog): string => log.readout?.summary?.startedAt ?? '';
+
 /** Steps of assigning that can be taken back. */
 const MOST_UNDO = 50;
 
@@ -50,6 +55,19 @@ export class IntakeStore {
     return problems;
   });
   readonly ready = computed(() => this.toSend().filter(({ id }) => !this.missing().has(id)));
+
+  private readonly ordered = computed(() =>
+    this.logs().filter((log) => isRun(log) || log.outcome?.outcome === 'stored'),
+  );
+  /** Whether every log tells when it was started. */
+  readonly haveClocks = computed(
+    () => this.ordered().length > 0 && this.ordered().every((log) => startOf(log) !== ''),
+  );
+  readonly chosenOrder = signal<OrderOfTesting | null>(null);
+  readonly order = computed<OrderOfTesting>(() => {
+    const chosen = this.chosenOrder() ?? 'by their clocks';
+    return chosen === 'by their clocks' && !this.haveClocks() ? 'not known' : chosen;
+  });
 
   constructor() {
     this.readers.replies.pipe(takeUntilDestroyed()).subscribe((reply) => this.hear(reply));
@@ -169,15 +187,20 @@ export class IntakeStore {
     });
   }
 
-  /** The place in the order of testing: by the logs' own clocks where all have one, else as dropped; after the stored runs. */
-  orderOf(log: DroppedLog): number {
-    const runs = this.toSend().concat(this.logs().filter(({ outcome }) => outcome?.outcome === 'stored'));
-    const started = (one: DroppedLog) => one.readout?.summary?.startedAt ?? '';
-    const sorted = runs.every((one) => started(one) !== '')
-      ? [...runs].sort((a, b) => started(a).localeCompare(started(b)) || a.id - b.id)
-      : [...runs].sort((a, b) => a.id - b.id);
+  /**
+   * The place of a log in the order of testing, after the stored runs; null when it is not known. An order that nobody vouches
+   * for would make the check for drift say things that are not so.
+   */
+  orderOf(log: DroppedLog): number | null {
+    const how = this.order();
+    if (how === 'not known') return null;
+    const runs = [...this.ordered()].sort(
+      how === 'by their clocks'
+        ? (a, b) => startOf(a).localeCompare(startOf(b)) || a.id - b.id
+        : (a, b) => a.id - b.id,
+    );
     const last = Math.max(0, ...this.stored.map(({ order }) => order ?? 0));
-    return last + sorted.findIndex(({ id }) => id === log.id) + 1;
+    return last + runs.findIndex(({ id }) => id === log.id) + 1;
   }
 
   coolerName(id: string | null): string {

@@ -42,8 +42,10 @@ export class LogDetail {
       `run ${assignment.run || 'not set'}`,
     ].join(', ');
     const summary = readout?.summary;
+    const order = this.store.orderOf(this.log());
+    const tested = order === null ? 'order of testing not known' : `tested as number ${order}`;
     return summary
-      ? `${place}. ${Math.round(summary.duration / 60)} min, ${summary.readings} readings, place ${this.store.orderOf(this.log())} in the order of testing.`
+      ? `${place}. ${Math.round(summary.duration / 60)} min, ${summary.readings} readings, ${tested}.`
       : `${place}.`;
   });
   protected readonly facts = computed(() => {
