@@ -148,7 +148,7 @@ export const singleUnits: PairCheck = ({ pair }) => {
       'leave-one-out',
       'caution',
       'Single mounts and runs',
-      `Leaving out any one of ${left.tips} of the ${left.units} ${left.unit}s ${to}: ${left.which.slice(0, 3).join('; ')}${left.tips > 3 ? '; …' : ''}.`,
+      `Leaving out any one of ${left.tips} of the ${left.units} ${left.unit}s ${to}: ${left.which.slice(0, 3).join('; ')}${left.tips > 3 ? ' and more' : ''}.`,
       numbers,
     ),
   ];

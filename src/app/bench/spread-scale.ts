@@ -1,19 +1,21 @@
 import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
 import { BenchNoise } from '../../../shared/contracts/benches';
+import { drawnWidth } from '../ui/gap-rule/drawn-width';
 
 const LEFT = 92;
-const WIDTH = 520;
 const RIGHT = 24;
+/** Wider than this the dots only drift apart. */
+const WIDEST = 640;
 
 /** Spread between runs and between mounts, one dot a verdict, on one ruled scale. */
 @Component({
   selector: 'tm-spread-scale',
   changeDetection: ChangeDetectionStrategy.OnPush,
   template: `
-    <svg [attr.viewBox]="'0 0 ' + width + ' 120'" role="img" [attr.aria-label]="label()">
+    <svg [attr.width]="width()" height="120" role="img" [attr.aria-label]="label()">
       @for (row of rows(); track row.name) {
         <text [attr.x]="0" [attr.y]="row.y + 4" class="name">{{ row.name }}</text>
-        <path [attr.d]="'M' + left + ' ' + row.y + 'H' + end" class="hair" />
+        <path [attr.d]="'M' + left + ' ' + row.y + 'H' + end()" class="hair" />
         @for (dot of row.dots; track $index) {
           <circle [attr.cx]="dot" [attr.cy]="row.y" r="4.5" [class.solid]="row.solid" />
         }
@@ -28,7 +30,7 @@ const RIGHT = 24;
           </text>
         }
       }
-      <path [attr.d]="'M' + left + ' 92H' + end" class="axis" />
+      <path [attr.d]="'M' + left + ' 92H' + end()" class="axis" />
       @for (tick of ticks(); track tick.x) {
         <path [attr.d]="'M' + tick.x + ' 92v' + (tick.text ? 8 : 4)" class="axis" />
         @if (tick.text) {
@@ -38,10 +40,12 @@ const RIGHT = 24;
     </svg>
   `,
   styles: `
+    :host {
+      display: block;
+    }
     svg {
       display: block;
-      width: 100%;
-      max-width: 640px;
+      max-width: 100%;
       overflow: visible;
     }
     text {
@@ -80,9 +84,11 @@ const RIGHT = 24;
 })
 export class SpreadScale {
   readonly noise = input.required<BenchNoise>();
-  protected readonly width = WIDTH;
+  // Drawn at the width it gets, so that its numbers stay as large as those around it.
+  private readonly drawn = drawnWidth(WIDEST);
+  protected readonly width = computed(() => Math.min(this.drawn.width(), WIDEST));
   protected readonly left = LEFT;
-  protected readonly end = WIDTH - RIGHT;
+  protected readonly end = computed(() => this.width() - RIGHT);
 
   private readonly reach = computed(() => {
     const { spreads, pooled } = this.noise();
@@ -91,7 +97,8 @@ export class SpreadScale {
   });
   private readonly x = computed(() => {
     const reach = this.reach();
-    return (value: number): number => LEFT + (value / reach) * (WIDTH - RIGHT - LEFT);
+    const span = this.end() - LEFT;
+    return (value: number): number => LEFT + (value / reach) * span;
   });
   protected readonly rows = computed(() => {
     const { spreads, pooled } = this.noise();

@@ -1,14 +1,20 @@
 import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
 import { BenchNoise } from '../../../shared/contracts/benches';
+import { drawnWidth } from '../ui/gap-rule/drawn-width';
 
-const BOX = { left: 44, top: 12, right: 404, bottom: 220, width: 420, height: 268 };
+const TOP = 12;
+const LEFT = 44;
+const BOTTOM = 220;
+const HEIGHT = 268;
+const WIDEST = 520;
 
 /** The smallest gap the bench can see against mounts per cooler, with the gap that matters as a line across. */
 @Component({
   selector: 'tm-visible-gap-curve',
   changeDetection: ChangeDetectionStrategy.OnPush,
   template: `
-    <svg [attr.viewBox]="'0 0 ' + box.width + ' ' + box.height" role="img" [attr.aria-label]="label()">
+    @let box = frame();
+    <svg [attr.width]="box.width" [attr.height]="box.height" role="img" [attr.aria-label]="label()">
       <path [attr.d]="'M' + box.left + ' ' + box.top + 'V' + box.bottom + 'H' + box.right" class="axis" />
       @for (tick of yTicks(); track tick.y) {
         <path [attr.d]="'M' + box.left + ' ' + tick.y + 'h' + (tick.text ? -8 : -4)" class="axis" />
@@ -53,10 +59,12 @@ const BOX = { left: 44, top: 12, right: 404, bottom: 220, width: 420, height: 26
     </details>
   `,
   styles: `
+    :host {
+      display: block;
+    }
     svg {
       display: block;
-      width: 100%;
-      max-width: 520px;
+      max-width: 100%;
       overflow: visible;
     }
     text {
@@ -90,7 +98,12 @@ const BOX = { left: 44, top: 12, right: 404, bottom: 220, width: 420, height: 26
 })
 export class VisibleGapCurve {
   readonly noise = input.required<BenchNoise>();
-  protected readonly box = BOX;
+  // Drawn at the width it gets, so that its numbers stay as large as those around it.
+  private readonly drawn = drawnWidth(420);
+  protected readonly frame = computed(() => {
+    const width = Math.min(this.drawn.width(), WIDEST);
+    return { left: LEFT, top: TOP, right: width - 16, bottom: BOTTOM, width, height: HEIGHT };
+  });
 
   /** Two mounts see only very large gaps; letting them set the scale would flatten the rest. */
   private readonly top = computed(() => {
@@ -100,14 +113,15 @@ export class VisibleGapCurve {
   });
   private readonly y = computed(() => {
     const top = this.top();
-    return (gap: number): number => BOX.bottom - (gap / top) * (BOX.bottom - BOX.top);
+    return (gap: number): number => BOTTOM - (gap / top) * (BOTTOM - TOP);
   });
   protected readonly points = computed(() => {
     const visible = this.noise().visible;
+    const { left, right } = this.frame();
     const most = Math.max(...visible.map(({ mounts }) => mounts));
     return visible.map(({ mounts, gap }) => ({
       mounts,
-      x: BOX.left + ((mounts - 1) / most) * (BOX.right - BOX.left),
+      x: left + ((mounts - 1) / most) * (right - left),
       y: this.y()(gap),
       inside: gap <= this.top(),
     }));
