@@ -2,6 +2,7 @@ import { createServer, type Server } from 'node:http';
 import type { AddressInfo } from 'node:net';
 import { join } from 'node:path';
 import type { DataSource } from 'typeorm';
+import { prettifyError, ZodError } from 'zod';
 import { demoSignIns, type DemoSignIn } from './accounts/demo-sign-ins';
 import { createApp } from './app';
 import { seedDemo } from './cli/seed';
@@ -18,7 +19,11 @@ export const LIMITS: Limits = {
 };
 
 export function report(line: string, error?: unknown): void {
-  console.error(error === undefined ? line : `${line}:`, ...(error === undefined ? [] : [error]));
+  if (error === undefined) console.error(line);
+  // A contract that an answer breaks can list thousands of fields; the first tell what is wrong.
+  else if (error instanceof ZodError)
+    console.error(`${line}:`, prettifyError(error).slice(0, 2000), error.stack?.split('\n    at ').slice(1));
+  else console.error(`${line}:`, error);
 }
 
 /** Everything the application needs, on a database that is connected. */

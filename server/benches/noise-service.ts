@@ -4,6 +4,9 @@ import { thresholdsInForce, valuesOf } from '../thresholds/thresholds-service';
 import { benchView, findBench } from './bench-service';
 import { smallestVisibleGaps } from './visible-gaps';
 
+/** A bench changes over the years: what it did long ago says little of it now, and reading all would take long. */
+const VERDICTS_POOLED = 200;
+
 interface Judged {
   verdict_id: string;
   study: string;
@@ -68,10 +71,15 @@ export async function benchNoise(
   const rows: Judged[] = await manager.query(
     `select v.id as verdict_id, s.name as study, c.name as condition, v.judged_at, v.smallest_visible_gap,
             v.judgement -> 'coolers' as coolers
-       from studies s join conditions c on c.study_id = s.id
-       join lateral (select * from verdicts n where n.condition_id = c.id and n.metric = 'rise'
-                       and n.state <> 'withdrawn' order by n.judged_at desc, n.id limit 1) v on true
-      where s.bench_id = $1 and s.team_id = $2 order by v.judged_at desc, v.id`,
+       from (select n.id from studies b join conditions k on k.study_id = b.id
+               join lateral (select id, judged_at from verdicts where condition_id = k.id and metric = 'rise'
+                                and state <> 'withdrawn' order by judged_at desc, id limit 1) n on true
+              where b.bench_id = $1 and b.team_id = $2 order by n.judged_at desc, n.id
+              limit ${VERDICTS_POOLED}) newest
+       join verdicts v on v.id = newest.id
+       join studies s on s.id = v.study_id
+       join conditions c on c.id = v.condition_id
+      order by v.judged_at desc, v.id`,
     [benchId, teamId],
   );
   const values = valuesOf(await thresholdsInForce(manager, teamId));

@@ -10,6 +10,7 @@ import { ConditionEntity, StudyCoolerEntity, StudyEntity } from '../studies/stud
 import { ThresholdsEntity } from '../thresholds/thresholds-entity';
 import { VerdictEntity, VerdictRunEntity } from '../verdicts/verdict-entity';
 import { CreateTables1796126400000 } from './migrations/1796126400000-create-tables';
+import { IndexVerdictsByCondition1796130000000 } from './migrations/1796130000000-index-verdicts-by-condition';
 import { SnakeNaming } from './naming';
 
 /** The way to the database at `url`; not yet connected. Tables come from migrations only. */
@@ -38,7 +39,7 @@ export function createDataSource(url: string, poolSize = 10): DataSource {
       VerdictRunEntity,
       LedgerEntryEntity,
     ],
-    migrations: [CreateTables1796126400000],
+    migrations: [CreateTables1796126400000, IndexVerdictsByCondition1796130000000],
     namingStrategy: new SnakeNaming(),
     synchronize: false,
     migrationsTransactionMode: 'each',

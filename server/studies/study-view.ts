@@ -117,8 +117,8 @@ export async function studiesPage(
     pattern,
   ]);
   const verdicts = await verdictRows(manager, teamId, {
-    where: `v.id in (select distinct on (condition_id) id from verdicts
-      where study_id = any($2) and metric = 'rise' order by condition_id, judged_at desc, id)`,
+    where: `v.id in (select (select n.id from verdicts n where n.condition_id = k.id and n.metric = 'rise'
+      order by n.judged_at desc, n.id limit 1) from conditions k where k.study_id = any($2))`,
     values: [studies.map(({ id }) => id)],
   });
   const items = (await complete(manager, studies, verdicts)).map(({ runsLeftOut: _, ...row }) => row);

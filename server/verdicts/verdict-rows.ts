@@ -46,7 +46,7 @@ const view = (row: RowOfQuery): VerdictRow => ({
       : null,
 });
 
-/** Which verdicts of a team: SQL on `v` (verdicts), `s` (studies) and `c` (conditions), with `$2`… from `values`. */
+/** Which verdicts of a team: SQL on `v` (verdicts), with `$2`… from `values`. */
 export interface VerdictsWanted {
   readonly where?: string;
   readonly values?: readonly unknown[];
@@ -54,7 +54,7 @@ export interface VerdictsWanted {
   readonly offset?: number;
 }
 
-/** Verdicts as lists show them, newest first, in one statement however many there are. */
+/** Verdicts as lists show them, newest first. The page is found by the index alone before anything is joined to it. */
 export async function verdictRows(
   manager: EntityManager,
   teamId: string,
@@ -67,14 +67,14 @@ export async function verdictRows(
             t.number <> (select max(number) from thresholds where team_id = $1)
               or v.evidence is distinct from
                  case v.metric when 'rise' then c.rise_evidence else c.resistance_evidence end as stale
-       from verdicts v
+       from (select v.id from verdicts v where v.team_id = $1 and (${where})
+              order by v.judged_at desc, v.id limit ${limit} offset ${offset}) page
+       join verdicts v on v.id = page.id
        join studies s on s.id = v.study_id
        join conditions c on c.id = v.condition_id
        join accounts a on a.id = v.prepared_by
        join thresholds t on t.id = v.thresholds_id
-      where v.team_id = $1 and (${where})
-      order by v.judged_at desc, v.id
-      limit ${limit} offset ${offset}`,
+      order by v.judged_at desc, v.id`,
     [teamId, ...values],
   );
   return rows.map(view);

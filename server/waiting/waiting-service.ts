@@ -6,11 +6,12 @@ import { verdictRows, type VerdictsWanted } from '../verdicts/verdict-rows';
 import { studiesInNeed } from './studies-in-need';
 
 /** A newer verdict on the same condition and quantity takes an older one's place in the queue. */
-const NEWEST = `not exists (select 1 from verdicts n where n.condition_id = v.condition_id and n.metric = v.metric
-  and (n.judged_at, n.id) > (v.judged_at, v.id))`;
+const NEWEST = `v.id = (select n.id from verdicts n where n.condition_id = v.condition_id and n.metric = v.metric
+  order by n.judged_at desc, n.id limit 1)`;
 
 /** A verdict the caller prepared, or whose study they prepared: not theirs to sign. */
-const OWN = 'v.prepared_by = $2 or s.prepared_by = $2';
+const OWN = `v.prepared_by = $2
+  or exists (select 1 from studies o where o.id = v.study_id and o.prepared_by = $2)`;
 
 /** How many things of one kind are shown as waiting. */
 const SHOWN = 100;

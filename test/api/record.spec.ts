@@ -102,6 +102,7 @@ test.each([
     `update ledger_entries set at = at - interval '1 ms' where team_id = $1 and number = 3`,
     3,
   ],
+  ['a digest made up', `update ledger_entries set digest = 'made up' where team_id = $1 and number = 4`, 4],
   ['a removed entry', `delete from ledger_entries where team_id = $1 and number = 2`, 2],
   [
     'two entries swapped',
@@ -117,6 +118,8 @@ test.each([
     [teamId],
   );
   expect(await check()).toMatchObject({ whole: false, brokenAt });
+  // What was tampered with is still there to be looked at.
+  expect(await entries()).not.toEqual([]);
 });
 
 test('many acts at once make one unbroken chain', async () => {
