@@ -50,6 +50,15 @@ export function guessFromName(fileName: string): NameGuess {
   const conditionAt = words.findIndex((word, i) => i > 0 && CONDITION_WORDS.test(word.split(/[-\s]/)[0]));
   if (condition === null && conditionAt > 0) condition = words.splice(conditionAt, 1)[0];
   else if (condition === null && words.length >= 2) condition = words.splice(1, 1)[0];
+  else if (condition === null && words.length === 1) {
+    // `coated fins raised load` is one field: its condition begins at the first word that names one.
+    const single = words[0].split(/\s+/);
+    const at = single.findIndex((word, i) => i > 0 && CONDITION_WORDS.test(word));
+    if (at > 0) {
+      words[0] = single.slice(0, at).join(' ');
+      condition = single.slice(at).join(' ');
+    }
+  }
   let cooler = words[0] ?? null;
   let guessedMount = mount.found;
   let guessedRun = run.found;

@@ -4,12 +4,12 @@ export interface PlateauFit {
   readonly plateau: number;
   /** s */
   readonly timeConstant: number;
-  /** Standard deviation of the readings about the curve, °C. */
+  /** Standard deviation about the curve of the means it is fitted to, °C. */
   readonly residual: number;
 }
 
-/** Readings used at most; a curve with three numbers needs no more. */
-const MOST_READINGS = 1200;
+/** The curve is fitted to means of so many stretches: three numbers need no more, and fast noise is out of the way. */
+const STRETCHES = 60;
 const TIME_CONSTANTS = 60;
 
 /** For one τ the best plateau and amplitude are a straight-line fit on exp(−t/τ). */
@@ -44,19 +44,21 @@ function fitAt(t: Float64Array, y: Float64Array, tau: number): PlateauFit {
 
 /**
  * The second opinion of `methods.md` section 6: an exponential fitted to the last two thirds of the log. Never a result,
- * only a check of the window. Usable when τ is under a third of the log and the residual under 0.3 °C; else null.
+ * only a check of the window. Usable when τ is under a third of the log and the residual under 0.3 °C, as in the table of
+ * that section; else null.
  */
 export function fitPlateau(seconds: Float64Array, rise: Float64Array): PlateauFit | null {
   const length = seconds[seconds.length - 1] - seconds[0];
   if (!(length > 0)) return null;
   let first = 0;
   while (seconds[first] < seconds[0] + length / 3) first += 1;
-  const stride = Math.max(1, Math.ceil((seconds.length - first) / MOST_READINGS));
+  const stride = Math.max(1, Math.ceil((seconds.length - first) / STRETCHES));
   const size = Math.floor((seconds.length - first) / stride);
   if (size < 20) return null;
   const t = new Float64Array(size);
   const y = new Float64Array(size);
-  // Averages of neighbours rather than every so-many-th reading: no reading is thrown away.
+  // Means of neighbours rather than every so-many-th reading; what does not divide evenly is left off at the beginning.
+  first = seconds.length - size * stride;
   for (let b = 0; b < size; b += 1) {
     for (let i = 0; i < stride; i += 1) {
       t[b] += (seconds[first + b * stride + i] - seconds[first]) / stride;

@@ -9,7 +9,7 @@ import {
 import { Log } from './log';
 import { Rise, formRise } from './rise';
 import { FoundWindow, SHORTEST_WINDOW, findSteadyWindow, settledBy, slopePer5Minutes } from './steady-window';
-import { Weighing, deviationOf, meanOf, timeWeights } from './window-mean';
+import { Weighing, meanOf, timeWeights, windowMean } from './window-mean';
 import { meanError } from './initial-positive-sequence';
 import { Problems } from './problems';
 import { PlateauFit, fitPlateau } from './plateau-fit';
@@ -108,19 +108,6 @@ function columnsFor(log: Log, choices: RunChoices, problems: Problems) {
   };
 }
 
-/** Mean and spread of some readings; null when none is finite. */
-function windowMean(values: Float64Array, weights: Float64Array | null): WindowMean | null {
-  const mean = meanOf(values, weights);
-  if (Number.isNaN(mean)) return null;
-  let lowest = Infinity;
-  let highest = -Infinity;
-  for (const value of values) {
-    if (value < lowest) lowest = value;
-    if (value > highest) highest = value;
-  }
-  return { mean, standardDeviation: deviationOf(values, mean), lowest, highest };
-}
-
 /** The window by hand, or by the rule. */
 function windowOf(trace: Rise, choices: RunChoices, problems: Problems): FoundWindow | null {
   if (!choices.window) return findSteadyWindow(trace.seconds, trace.rise);
@@ -176,7 +163,8 @@ export function reduceRun(log: Log, choices: RunChoices): ReducedRun {
   const weighing = weighingOf(seconds);
   const weights = weighing === 'plain' ? null : timeWeights(seconds, hole);
   const riseInWindow = trace.rise.subarray(from, to + 1);
-  const rise = meanOf(riseInWindow, weights);
+  const riseMean = windowMean(riseInWindow, weights)!;
+  const rise = riseMean.mean;
   const heatInWindow = Float64Array.from(trace.at.subarray(from, to + 1), (i) => heat[i]);
   // Watts and fan speed may be logged in other rows than the heat source: all theirs between the same moments count.
   const [rowFrom, rowTo] = [trace.at[from], trace.at[to]];
@@ -185,7 +173,7 @@ export function reduceRun(log: Log, choices: RunChoices): ReducedRun {
   const inRows = (values: Float64Array | null) =>
     values ? windowMean(values.subarray(rowFrom, rowTo + 1), rowWeights) : null;
   const power = inRows(watts);
-  const error = meanError(riseInWindow, meanOf(riseInWindow, null));
+  const error = meanError(riseInWindow, meanOf(Array.from(riseInWindow), null));
   const plateau = fitPlateau(trace.seconds, trace.rise);
   const tooFarFromPlateau = plateau !== null && Math.abs(plateau.plateau - rise) > 0.3;
   const window: SteadyWindow = {
@@ -224,7 +212,7 @@ export function reduceRun(log: Log, choices: RunChoices): ReducedRun {
     fanSpeed: facts.fanSpeed,
     window,
     within: {
-      standardDeviation: deviationOf(riseInWindow, rise),
+      standardDeviation: riseMean.standardDeviation,
       standardError: error.standardError,
       effectiveReadings: error.effectiveReadings,
     },

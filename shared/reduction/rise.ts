@@ -12,6 +12,23 @@ export interface Rise {
   readonly ambientLost: { readonly from: number; readonly to: number; readonly readings: number } | null;
 }
 
+/** Most decimals a sensor is logged with. */
+const MOST_DECIMALS = 6;
+
+/** Power of ten that makes whole numbers of all readings, or 0 when they have more decimals than sensors give. */
+function decimalScale(...columns: readonly Float64Array[]): number {
+  let scale = 1;
+  for (const column of columns) {
+    for (const value of column) {
+      while (!Number.isNaN(value) && Math.round(value * scale) / scale !== value) {
+        scale *= 10;
+        if (scale > 10 ** MOST_DECIMALS) return 0;
+      }
+    }
+  }
+  return scale;
+}
+
 /** Ambient readings further apart than this are not joined, s; slower ambient loggers are allowed five of their own steps. */
 const LONGEST_JOIN = 60;
 
@@ -30,6 +47,7 @@ export function formRise(seconds: Float64Array, heat: Float64Array, ambient: Flo
   let lostFrom = NaN;
   let lostTo = NaN;
   const line = typeof ambient === 'number' ? null : new AmbientLine(seconds, ambient);
+  const scale = typeof ambient === 'number' ? 0 : decimalScale(heat, ambient);
   for (let i = 0; i < n; i += 1) {
     if (Number.isNaN(heat[i])) continue;
     const air = line ? line.at(i) : (ambient as number);
@@ -41,7 +59,9 @@ export function formRise(seconds: Float64Array, heat: Float64Array, ambient: Flo
     }
     at[used] = i;
     same[used] = air;
-    rise[used] = heat[i] - air;
+    // 45.3 − 22.1 is 23.2 and not 23.199999999999996: the difference of two decimals is a decimal.
+    const sameRow = line !== null && !Number.isNaN((ambient as Float64Array)[i]);
+    rise[used] = scale > 0 && sameRow ? Math.round((heat[i] - air) * scale) / scale : heat[i] - air;
     used += 1;
   }
   const indices = at.subarray(0, used);

@@ -1,7 +1,13 @@
+import { mean as exactMean, sampleStandardDeviation } from '../numerics';
+import { WindowMean } from '../contracts/run-summary';
+
 /** How the mean of a window is taken: each reading alike, or each for the time it stands for. */
 export type Weighing = 'plain' | 'time-weighted';
 
-/** Sum of `values[i] · weights[i]` about `shift`, compensated (Neumaier 1974), so that order hardly matters. */
+/** Up to this many readings sums are exact; beyond it they are compensated, which keeps all digits anybody reads. */
+const MOST_EXACT = 20_000;
+
+/** Sum of `term(0)` … `term(length − 1)`, compensated (Neumaier 1974). */
 function compensatedSum(length: number, term: (i: number) => number): number {
   let sum = 0;
   let lost = 0;
@@ -16,7 +22,7 @@ function compensatedSum(length: number, term: (i: number) => number): number {
 
 /**
  * Time each reading stands for: half the way to each neighbour, in s. Across a hole in the log a reading stands for no
- * more than `longest`, for nothing is known of the rest.
+ * more than half of `longest`, for nothing is known of the rest.
  */
 export function timeWeights(seconds: Float64Array, longest: number): Float64Array {
   const weights = new Float64Array(seconds.length);
@@ -28,33 +34,51 @@ export function timeWeights(seconds: Float64Array, longest: number): Float64Arra
   return weights;
 }
 
-/** Mean of the finite values, each weighed where weights are given; NaN when there are none. */
-export function meanOf(values: Float64Array, weights: Float64Array | null): number {
-  let first = NaN;
-  let n = 0;
-  for (const value of values) {
-    if (Number.isNaN(value)) continue;
-    if (n === 0) first = value;
-    n += 1;
-  }
-  if (n === 0) return NaN;
-  const weight = (i: number) => (Number.isNaN(values[i]) ? 0 : weights ? weights[i] : 1);
-  const total = weights ? compensatedSum(values.length, weight) : n;
-  if (!(total > 0)) return meanOf(values, null);
-  // About the first reading, so that the sum keeps the digits a large common part would take.
-  const above = compensatedSum(values.length, (i) =>
-    Number.isNaN(values[i]) ? 0 : weight(i) * (values[i] - first),
-  );
-  return first + above / total;
+/** Mean about the first reading, so that the sum keeps the digits a large common part would take. */
+function compensatedMean(values: readonly number[], weights: readonly number[] | null): number {
+  const first = values[0];
+  const weight = (i: number) => (weights ? weights[i] : 1);
+  const total = weights ? compensatedSum(values.length, weight) : values.length;
+  if (!(total > 0)) return compensatedMean(values, null);
+  return first + compensatedSum(values.length, (i) => weight(i) * (values[i] - first)) / total;
 }
 
-/** Standard deviation about `mean` with divisor n − 1, each reading alike; 0 for a single reading. */
-export function deviationOf(values: Float64Array, mean: number): number {
-  let n = 0;
-  for (const value of values) if (!Number.isNaN(value)) n += 1;
-  if (n < 2) return 0;
-  const squares = compensatedSum(values.length, (i) =>
-    Number.isNaN(values[i]) ? 0 : (values[i] - mean) ** 2,
-  );
-  return Math.sqrt(squares / (n - 1));
+/**
+ * Mean of finite readings; NaN of none.
+ * @param weights of each reading, or null: all alike
+ */
+export function meanOf(values: readonly number[], weights: readonly number[] | null): number {
+  if (values.length === 0) return NaN;
+  return weights === null && values.length <= MOST_EXACT
+    ? exactMean(values)
+    : compensatedMean(values, weights);
+}
+
+/** Standard deviation about a mean with divisor n − 1, each reading alike; 0 of a single reading. */
+function deviationOf(values: readonly number[], mean: number, plain: boolean): number {
+  if (values.length < 2) return 0;
+  if (plain && values.length <= MOST_EXACT) return sampleStandardDeviation(values);
+  return Math.sqrt(compensatedSum(values.length, (i) => (values[i] - mean) ** 2) / (values.length - 1));
+}
+
+/**
+ * Mean, spread and extremes of the finite readings; null when there are none.
+ * @param weights as long as `values`, or null: each reading alike
+ */
+export function windowMean(values: Float64Array, weights: Float64Array | null): WindowMean | null {
+  const finite: number[] = [];
+  const finiteWeights: number[] | null = weights ? [] : null;
+  let lowest = Infinity;
+  let highest = -Infinity;
+  for (let i = 0; i < values.length; i += 1) {
+    const value = values[i];
+    if (Number.isNaN(value)) continue;
+    finite.push(value);
+    if (weights) finiteWeights?.push(weights[i]);
+    if (value < lowest) lowest = value;
+    if (value > highest) highest = value;
+  }
+  if (finite.length === 0) return null;
+  const mean = meanOf(finite, finiteWeights);
+  return { mean, standardDeviation: deviationOf(finite, mean, weights === null), lowest, highest };
 }
