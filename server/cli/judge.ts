@@ -1,7 +1,7 @@
 import { readFileSync } from 'node:fs';
 import { dirname, resolve } from 'node:path';
 import { Finding, JudgedCooler, Judgement } from '../../shared/contracts/judgement';
-import { judge } from '../../shared/judgement';
+import { judge, worstFirst } from '../../shared/judgement';
 import { BadRequest, JudgeRequest, parseRequest } from './judging/judge-request';
 import { readRun } from './judging/read-run';
 
@@ -17,7 +17,8 @@ export async function main(argv: readonly string[]): Promise<number> {
       throw new BadRequest('Usage: npm run -s judge -- request.json   (or - for standard input)');
     const { text, name, folder } = readRequest(file);
     const request = parseRequest(text, name);
-    const coolers = await readCoolers(request, folder);
+    const noticed: Finding[] = [];
+    const coolers = await readCoolers(request, folder, (finding) => noticed.push(finding));
     const judgement = judge({
       metric: request.metric,
       thresholds: request.thresholds,
@@ -27,7 +28,7 @@ export async function main(argv: readonly string[]): Promise<number> {
       coolers,
       leftOut: [],
     });
-    process.stdout.write(`${JSON.stringify(answer(judgement, request, coolers), null, 2)}\n`);
+    process.stdout.write(`${JSON.stringify(answer(judgement, request, coolers, noticed), null, 2)}\n`);
     return 0;
   } catch (error) {
     if (!(error instanceof BadRequest)) throw error;
@@ -46,8 +47,12 @@ function readRequest(file: string): { text: string; name: string; folder: string
   }
 }
 
-async function readCoolers(request: JudgeRequest, folder: string): Promise<JudgedCooler[]> {
-  const place = { folder, metric: request.metric, nominalWatts: request.nominalWatts ?? null };
+async function readCoolers(
+  request: JudgeRequest,
+  folder: string,
+  tell: (finding: Finding) => void,
+): Promise<JudgedCooler[]> {
+  const place = { folder, metric: request.metric, nominalWatts: request.nominalWatts ?? null, tell };
   const coolers: JudgedCooler[] = [];
   for (const cooler of request.coolers) {
     const mounts: JudgedCooler['mounts'] = [];
@@ -63,29 +68,36 @@ async function readCoolers(request: JudgeRequest, folder: string): Promise<Judge
 }
 
 /** The judgement as the command tells it: the engine's own, words put beside each pair. */
-function answer(judgement: Judgement, request: JudgeRequest, coolers: readonly JudgedCooler[]) {
+function answer(
+  judgement: Judgement,
+  request: JudgeRequest,
+  coolers: readonly JudgedCooler[],
+  noticed: readonly Finding[],
+) {
   const noWatts = coolers.every(({ mounts }) =>
     mounts.every(({ runs }) => runs.every(({ watts }) => watts === null)),
   );
-  const findings: Finding[] =
-    request.metric === 'resistance' && noWatts
-      ? [
-          ...judgement.findings,
-          {
-            code: 'gap-that-matters-unit',
-            level: 'note',
-            title: 'Gap that matters',
-            text: 'No watts are known, so the gap that matters was read in K/W as given.',
-            numbers: { gapThatMatters: request.thresholds.gapThatMatters },
-          },
-        ]
-      : judgement.findings;
+  const inKelvinsPerWatt: Finding = {
+    code: 'gap-that-matters-unit',
+    level: 'note',
+    title: 'Gap that matters',
+    text: 'No watts are known, so the gap that matters was read in K/W as given.',
+    numbers: { gapThatMatters: request.thresholds.gapThatMatters },
+  };
+  const findings = worstFirst([
+    ...judgement.findings,
+    ...noticed,
+    ...(request.metric === 'resistance' && noWatts ? [inKelvinsPerWatt] : []),
+  ]);
   return {
     ...judgement,
     words: undefined,
+    ranking: judgement.several?.ranking ?? null,
     pairs: judgement.pairs.map((pair, index) => ({
       ...pair,
       power: pair.powerAtGapThatMatters,
+      permutationP: pair.permutation?.p ?? null,
+      runsNeeded: pair.unitsNeeded?.runs ?? null,
       ...judgement.words[index],
     })),
     findings,

@@ -2,6 +2,8 @@ import * as z from 'zod';
 import { metricSchema } from './common';
 import { findingLevelSchema } from './run-summary';
 
+const nullableNumber = z.number().nullable();
+
 /** The lead's rules for a call. `gapThatMatters` is in °C; for resistance it is divided by the median power. */
 export const thresholdValuesSchema = z.object({
   confidence: z.number().gt(0.5).lt(1),
@@ -52,6 +54,19 @@ export const leftOutRunSchema = z.object({
   reason: z.string(),
 });
 
+/** A source of doubt that the runs themselves don't show, such as a sensor's calibration. Source of the terms: JCGM 100:2008. */
+export const statedUncertaintySchema = z.object({
+  source: z.string().min(1),
+  kind: z.enum(['additive', 'gain']).describe('In the unit of the metric, or as a share of the reading.'),
+  value: z.number().positive().describe('Half-width; for `normal` the standard uncertainty.'),
+  distribution: z.enum(['normal', 'rectangular', 'triangular', 'U-shaped']),
+  degreesOfFreedom: nullableNumber.describe('null: taken as certain.'),
+  varies: z
+    .enum(['never', 'per cooler', 'per mount', 'per run'])
+    .describe('How often it takes a new value. What never varies and is additive cancels in a gap.'),
+});
+export type StatedUncertainty = z.infer<typeof statedUncertaintySchema>;
+
 /** All that a judgement depends on. The same input gives the same bits. */
 export const judgementInputSchema = z.object({
   metric: metricSchema,
@@ -64,6 +79,7 @@ export const judgementInputSchema = z.object({
     .min(2)
     .describe('In the order of comparison: gaps are earlier minus later, so the reference comes last.'),
   leftOut: z.array(leftOutRunSchema),
+  uncertainties: z.array(statedUncertaintySchema).optional(),
 });
 export type JudgementInput = z.infer<typeof judgementInputSchema>;
 
@@ -86,8 +102,6 @@ export const notJudgedCodeSchema = z.enum([
   'refused',
 ]);
 export type NotJudgedCode = z.infer<typeof notJudgedCodeSchema>;
-
-const nullableNumber = z.number().nullable();
 
 /** Evidence of one cooler, in the metric's unit. */
 export const coolerResultSchema = z.object({
@@ -119,6 +133,51 @@ export const naiveResultSchema = z.object({
   p: z.number(),
   marginOfError: z.number(),
 });
+
+/** One line of a pair's uncertainty budget, in the metric's unit. */
+export const budgetLineSchema = z.object({
+  source: z.string(),
+  uncertainty: z.number().describe('Standard uncertainty of the gap from this source; 0 where it cancels.'),
+  degreesOfFreedom: nullableNumber.describe('null: taken as certain.'),
+  note: z.string().nullable(),
+});
+
+/** What methods numbered 2 add to a pair; absent in judgements by earlier ones. */
+const furtherPairFields = {
+  basis: z
+    .enum(['mounts', 'runs', 'bench history', 'borrowed mounts'])
+    .nullable()
+    .optional()
+    .describe('Where the noise comes from; borrowed: one cooler was remounted and stands for both.'),
+  permutation: z
+    .object({ p: z.number(), arrangements: z.number().int(), exact: z.boolean(), agrees: z.boolean() })
+    .nullable()
+    .optional()
+    .describe("Second opinion: permutation of Welch's t over the units of evidence."),
+  trimmed: z
+    .object({ gap: z.number(), p: z.number(), agrees: z.boolean() })
+    .nullable()
+    .optional()
+    .describe("Yuen's test of 20 % trimmed means: whether single units drive the call."),
+  adjustedP: nullableNumber.optional().describe("Holm's, over all pairs judged; null with two coolers."),
+  gamesHowellP: nullableNumber.optional(),
+  unitsNeeded: z
+    .object({ unit: z.enum(['mount', 'run']), units: z.number().int(), runs: z.number().int() })
+    .nullable()
+    .optional()
+    .describe('Fewest per cooler that find the gap that matters as often as the thresholds ask.'),
+  outliers: z.array(z.string()).optional().describe('Units and runs that stand out; they stay in.'),
+  budget: z
+    .object({
+      lines: z.array(budgetLineSchema),
+      standardUncertainty: z.number(),
+      degreesOfFreedom: nullableNumber,
+      coverageFactor: z.number(),
+      expanded: z.number(),
+    })
+    .nullable()
+    .optional(),
+};
 
 /** The gap between two coolers, a's mean minus b's, in the metric's unit. */
 export const pairResultSchema = z.object({
@@ -169,6 +228,7 @@ export const pairResultSchema = z.object({
     })
     .nullable()
     .describe('How many single units, left out, would change the flag.'),
+  ...furtherPairFields,
 });
 export type PairResult = z.infer<typeof pairResultSchema>;
 
@@ -200,5 +260,21 @@ export const judgementSchema = z.object({
   pairs: z.array(pairResultSchema),
   words: z.array(wordsSchema).describe('One for each pair, in the same order.'),
   findings: z.array(findingSchema),
+  several: z
+    .object({
+      omnibus: z
+        .object({
+          statistic: z.number(),
+          degreesOfFreedom: z.tuple([z.number(), z.number()]),
+          p: z.number(),
+        })
+        .nullable()
+        .describe("Welch's analysis of variance: are all coolers alike?"),
+      ranking: z.array(z.string()).describe('Coolers by mean, lowest first.'),
+      bars: z.array(z.array(z.string())).describe('Coolers that cannot be told apart; bars may overlap.'),
+    })
+    .nullable()
+    .optional()
+    .describe('With three coolers or more.'),
 });
 export type Judgement = z.infer<typeof judgementSchema>;

@@ -1,5 +1,6 @@
 import { Judgement, JudgementInput } from '../contracts/judgement';
 import { judgeByWelch } from './judge';
+import { judgeFully } from './judge-fully';
 
 /**
  * Numbered recipes. A change to any number a recipe can give is a new number here; old ones stay, so that a stored verdict can
@@ -9,6 +10,10 @@ const METHODS: Readonly<Record<string, (input: JudgementInput) => Judgement>> = 
   'welch-mounts/1': judgeByWelch,
   'welch-runs/1': judgeByWelch,
   'welch-each-pair/1': judgeByWelch,
+  'welch-mounts/2': judgeFully,
+  'welch-runs/2': judgeFully,
+  'welch-history/2': judgeFully,
+  'welch-each-pair/2': judgeFully,
 };
 
 /** Every method that can be called, newest last. */
@@ -28,7 +33,7 @@ export class UnknownMethod extends Error {
  * @throws UnknownMethod when `method` is not registered
  */
 export function judge(input: JudgementInput, method?: string): Judgement {
-  if (method === undefined) return judgeByWelch(input);
+  if (method === undefined) return judgeFully(input);
   const recipe = METHODS[method];
   if (!recipe) throw new UnknownMethod(method);
   return recipe(input);
@@ -37,3 +42,4 @@ export function judge(input: JudgementInput, method?: string): Judgement {
 export { ENGINE_VERSION } from './judge';
 export { welchPower } from './welch-power';
 export { headline } from './words';
+export { worstFirst } from './findings';

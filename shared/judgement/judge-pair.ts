@@ -1,4 +1,4 @@
-import { JudgedCooler, NotJudgedCode, PairResult, Scope, SizeCall } from '../contracts/judgement';
+import { JudgedCooler, NotJudgedCode, PairResult, SizeCall } from '../contracts/judgement';
 import {
   degreesOfFreedomCap,
   Evidence,
@@ -11,7 +11,7 @@ import {
 import { stepEffect } from './sensor-step';
 import { leaveOneOut, moreEvidence } from './what-would-change';
 import { equivalence, isOutside, welch, WelchOptions, WelchResult } from './welch';
-import { welchPower } from './welch-power';
+import { WelchPower, welchPower } from './welch-power';
 
 /** The rules of one judgement, `gapThatMatters` already in the metric's unit. */
 export interface Rules {
@@ -22,7 +22,7 @@ export interface Rules {
   readonly inDegrees: boolean;
 }
 
-type Reason = NonNullable<PairResult['notJudged']>;
+export type Reason = NonNullable<PairResult['notJudged']>;
 
 /** Both coolers' evidence in the same unit, or why there is none. */
 export function commonEvidence(a: JudgedCooler, b: JudgedCooler): readonly [Evidence, Evidence] | Reason {
@@ -38,7 +38,7 @@ export function commonEvidence(a: JudgedCooler, b: JudgedCooler): readonly [Evid
   return [runEvidence(a), runEvidence(b)];
 }
 
-function tooLittle(a: Evidence, b: Evidence): Reason | null {
+export function tooLittle(a: Evidence, b: Evidence): Reason | null {
   const [na, nb] = [a.values.length, b.values.length];
   if (na === 1 && nb === 1)
     return reason(
@@ -64,9 +64,9 @@ function tooLittle(a: Evidence, b: Evidence): Reason | null {
   return null;
 }
 
-const reason = (code: NotJudgedCode, words: string): Reason => ({ code, reason: words });
+export const reason = (code: NotJudgedCode, words: string): Reason => ({ code, reason: words });
 
-function optionsFor(
+export function optionsFor(
   a: JudgedCooler,
   b: JudgedCooler,
   evidence: readonly [Evidence, Evidence],
@@ -106,9 +106,28 @@ export function judgePair(a: JudgedCooler, b: JudgedCooler, rules: Rules): PairR
     );
 
   const power = welchPower(side(first), side(second), rules.confidence);
-  const test = equivalence(result, rules.gapThatMatters, rules.confidence);
-  const scope: Scope = first.unit === 'mount' ? 'mounts' : 'runs only';
   const outside = isOutside(result);
+  return {
+    ...concluded(a, b, rules, result, power, lacking),
+    scope: first.unit === 'mount' ? 'mounts' : 'runs only',
+    unitOfEvidence: first.unit,
+    tippingMountSpread: first.unit === 'run' && outside && !lacking ? tippingSpread(result) : null,
+    naive: first.unit === 'mount' ? naiveResult(a, b, rules.confidence) : null,
+    more: lacking ? [] : moreEvidence(a, b, common, result, rules.confidence),
+    leaveOneOut: lacking ? null : leaveOneOut(a, b, first.unit, options, outside),
+  };
+}
+
+/** What follows from a test's result whatever the evidence was: interval, call, equivalence, power. */
+export function concluded(
+  a: JudgedCooler,
+  b: JudgedCooler,
+  rules: Rules,
+  result: WelchResult,
+  power: WelchPower | null,
+  lacking: Reason | null,
+): PairResult {
+  const test = equivalence(result, rules.gapThatMatters, rules.confidence);
   return {
     ...empty(a, b, rules),
     gap: result.gap,
@@ -122,15 +141,9 @@ export function judgePair(a: JudgedCooler, b: JudgedCooler, rules: Rules): PairR
     smallestVisibleGap: finiteOrNull(power?.gapAt(rules.power)),
     powerAtGapThatMatters: finiteOrNull(power?.powerAt(rules.gapThatMatters)),
     equivalence: { p: test.p, interval: [...test.interval], confidence: test.confidence },
-    flag: lacking ? 'not judged' : outside ? 'outside noise' : 'within noise',
+    flag: lacking ? 'not judged' : isOutside(result) ? 'outside noise' : 'within noise',
     sizeCall: lacking ? 'size open' : sizeCall(result, test.interval, rules.gapThatMatters),
-    scope,
-    unitOfEvidence: first.unit,
-    tippingMountSpread: first.unit === 'run' && outside && !lacking ? tippingSpread(result) : null,
-    naive: first.unit === 'mount' ? naiveResult(a, b, rules.confidence) : null,
     notJudged: lacking,
-    more: lacking ? [] : moreEvidence(a, b, common, result, rules.confidence),
-    leaveOneOut: lacking ? null : leaveOneOut(a, b, first.unit, options, outside),
   };
 }
 
@@ -167,7 +180,7 @@ function empty(a: JudgedCooler, b: JudgedCooler, rules: Rules): PairResult {
 }
 
 /** The gap is still told, as the difference of the unit means, with nothing to judge it by. */
-function withoutCall(
+export function withoutCall(
   a: JudgedCooler,
   b: JudgedCooler,
   rules: Rules,
@@ -187,13 +200,13 @@ function withoutCall(
 /**
  * SD of remounting at which a gap seen on one mount each stops being outside noise: √(max(0, (|gap|/t)² − SE²)/2).
  */
-function tippingSpread({ gap, marginOfError, standardError }: WelchResult): number {
+export function tippingSpread({ gap, marginOfError, standardError }: WelchResult): number {
   const quantile = marginOfError / standardError;
   return Math.sqrt(Math.max(0, (gap / quantile) ** 2 - standardError ** 2) / 2);
 }
 
 /** What Welch's test says when runs of one mount are taken as independent, which over-claims. */
-function naiveResult(a: JudgedCooler, b: JudgedCooler, confidence: number): PairResult['naive'] {
+export function naiveResult(a: JudgedCooler, b: JudgedCooler, confidence: number): PairResult['naive'] {
   const result = welch(side(runEvidence(a)), side(runEvidence(b)), { confidence });
   if (!result) return null;
   const { gap, standardError, degreesOfFreedom, p, marginOfError } = result;

@@ -27,7 +27,7 @@ import { Unit } from './quantity-format';
 import { verdictWords } from './words';
 
 /** Version of the engine as a whole; stored with every verdict. */
-export const ENGINE_VERSION = '1.0.0';
+export const ENGINE_VERSION = '1.1.0';
 
 function median(values: readonly number[]): number | null {
   if (values.length === 0) return null;
@@ -36,8 +36,11 @@ function median(values: readonly number[]): number | null {
   return sorted.length % 2 === 1 ? sorted[middle] : (sorted[middle - 1] + sorted[middle]) / 2;
 }
 
+/** How one pair is judged under an edition of the rules. */
+export type JudgeOne = (a: JudgedCooler, b: JudgedCooler) => PairResult;
+
 /** The thresholds in the metric's unit: a gap in °C is worth gap ÷ median power in K/W. */
-function rulesFor(input: JudgementInput): Rules {
+export function rulesFor(input: JudgementInput): Rules {
   const { confidence, power, gapThatMatters } = input.thresholds;
   if (input.metric === 'rise') return { confidence, power, gapThatMatters, inDegrees: true };
   const watts = median(
@@ -81,7 +84,7 @@ function coolerResult(cooler: JudgedCooler, confidence: number): CoolerResult {
 }
 
 /** When order and cooler can hardly be told apart, a gap counts only if it stands with the drift taken out. */
-function withheldIfConfounded(
+export function withheldIfConfounded(
   pair: PairResult,
   a: JudgedCooler,
   b: JudgedCooler,
@@ -124,14 +127,14 @@ function withLeftOut(input: JudgementInput): readonly JudgedCooler[] {
   });
 }
 
-function leftOutFinding(input: JudgementInput, rules: Rules, pairs: readonly PairResult[]): Finding[] {
+function leftOutFinding(input: JudgementInput, judgeOne: JudgeOne, pairs: readonly PairResult[]): Finding[] {
   if (input.leftOut.length === 0) return [];
   const full = withLeftOut(input);
   return pairs.flatMap((pair) => {
     const count = input.leftOut.filter(({ cooler }) => cooler === pair.a || cooler === pair.b).length;
     const [a, b] = [pair.a, pair.b].map((name) => full.find((cooler) => cooler.name === name));
     if (count === 0 || !a || !b) return [];
-    const whole = judgePair(a, b, rules);
+    const whole = judgeOne(a, b);
     const changes = whole.flag !== pair.flag;
     return [
       finding(
@@ -156,36 +159,47 @@ function methodFor(coolers: readonly JudgedCooler[]): string {
   return remounted === 0 ? 'welch-runs/1' : 'welch-each-pair/1';
 }
 
-/** The recipe numbered 1: Welch's test on mount means where both coolers were remounted, else on runs, pair by pair. */
+/** All pairs of the coolers, a before b in the order of comparison. */
+export const pairsOf = (coolers: readonly JudgedCooler[]): (readonly [JudgedCooler, JudgedCooler])[] =>
+  coolers.flatMap((a, i) => coolers.slice(i + 1).map((b) => [a, b] as const));
+
+/** The first edition of the rules: Welch's test on mount means where both coolers were remounted, else on runs. */
 export function judgeByWelch(input: JudgementInput): Judgement {
   const rules = rulesFor(input);
+  const judgeOne: JudgeOne = (a, b) => judgePair(a, b, rules);
+  const pairs = pairsOf(input.coolers).map(([a, b]) =>
+    withheldIfConfounded(judgeOne(a, b), a, b, rules.confidence),
+  );
+  return { method: methodFor(input.coolers), ...told(input, rules, pairs, judgeOne) };
+}
+
+/** Everything a judgement says of pairs already judged. */
+export function told(
+  input: JudgementInput,
+  rules: Rules,
+  pairs: PairResult[],
+  judgeOne: JudgeOne,
+): Omit<Judgement, 'method'> {
   const unit: Unit = input.metric === 'rise' ? '°C' : 'K/W';
   const coolers = input.coolers.map((cooler) => coolerResult(cooler, rules.confidence));
   const several = input.coolers.length > 2;
-  const pairs: PairResult[] = [];
-  const findings: Finding[] = [];
-  input.coolers.forEach((a, i) => {
-    input.coolers.slice(i + 1).forEach((b, offset) => {
-      const pair = withheldIfConfounded(judgePair(a, b, rules), a, b, rules.confidence);
-      pairs.push(pair);
-      const own = findingsOf({
-        pair,
-        a,
-        b,
-        resultA: coolers[i],
-        resultB: coolers[i + 1 + offset],
-        input,
-        rules,
-        unit,
-      });
-      findings.push(
-        ...own.map((one) => (several ? { ...one, text: `${a.name} against ${b.name}: ${one.text}` } : one)),
-      );
+  const resultOf = (cooler: JudgedCooler) => coolers[input.coolers.indexOf(cooler)];
+  const findings = pairsOf(input.coolers).flatMap(([a, b], index) => {
+    const pair = pairs[index];
+    const own = findingsOf({
+      pair,
+      a,
+      b,
+      resultA: resultOf(a),
+      resultB: resultOf(b),
+      input,
+      rules,
+      unit,
     });
+    return own.map((one) => (several ? { ...one, text: `${a.name} against ${b.name}: ${one.text}` } : one));
   });
-  findings.push(...leftOutFinding(input, rules, pairs));
+  findings.push(...leftOutFinding(input, judgeOne, pairs));
   return {
-    method: methodFor(input.coolers),
     engine: ENGINE_VERSION,
     unit,
     coolers,

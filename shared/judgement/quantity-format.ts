@@ -84,7 +84,9 @@ export function formatRatio(clearance: number): string {
 
 /** A probability set by a person, in percent as given: 0.95 → `95%`, 0.995 → `99.5%`. */
 export function formatLevel(probability: number): string {
-  return `${Number((probability * 100).toFixed(6))}%`;
+  const level = Number((probability * 100).toFixed(6));
+  // A level that Holm's rule divides has no end of decimals; it is cut, never rounded up.
+  return `${Number(level.toFixed(3)) === level ? level : Math.floor(level * 10) / 10}%`;
 }
 
 /** A p value for a sentence: `= 0.053`, never printed as zero: `< 0.0001`. */

@@ -1,4 +1,12 @@
-import { betaDensity, findRoot, gaussLegendre, normalTail, studentQuantile } from '../numerics';
+import {
+  betaDensity,
+  findRoot,
+  gaussLegendre,
+  noncentralTTails,
+  normalQuantile,
+  normalTail,
+  studentQuantile,
+} from '../numerics';
 import { Side } from './welch';
 
 type Spread = Pick<Side, 'variance' | 'units'>;
@@ -78,6 +86,145 @@ export function welchPower(first: Spread, second: Spread, confidence: number): W
   };
 }
 
+/** What the quick figures need beside the two spreads. */
+export interface QuickPowerOptions {
+  readonly confidence: number;
+  readonly degreesOfFreedomCap?: number;
+}
+
+/**
+ * The same integral on coarser grids, with the cap on degrees of freedom that a judgement of mounts has, and a root searched
+ * from a close guess: nine digits in a tenth of the time. Null as `welchPower`.
+ */
+export function quickWelchPower(
+  first: Spread,
+  second: Spread,
+  options: QuickPowerOptions,
+): WelchPower | null {
+  const fine = quickIntegral(first, second, options, 1);
+  if (!fine) return null;
+  const { rejecting, typicalBound, standardError } = fine;
+  return {
+    standardError,
+    powerAt: (gap) => rejecting(Math.abs(gap) / standardError),
+    gapAt: (power) => {
+      // The root of a rougher integral, then two or three steps on the fine one.
+      const rough = quickIntegral(first, second, options, 2)?.rejecting ?? rejecting;
+      const start = rootFrom(rough, power, typicalBound, 1e-5);
+      let slope = (rough(1.01 * start) - rough(start)) / (0.01 * start);
+      let at = start;
+      let off = rejecting(at) - power;
+      for (let step = 0; step < 6 && Number.isFinite(at); step++) {
+        const move = off / slope;
+        at -= move;
+        if (Math.abs(move) <= 1e-6 * at) break;
+        const before = off;
+        off = rejecting(at) - power;
+        if (off !== before) slope = (before - off) / move;
+      }
+      return at * standardError;
+    },
+  };
+}
+
+interface QuickIntegral {
+  readonly rejecting: (ncp: number) => number;
+  readonly typicalBound: number;
+  readonly standardError: number;
+}
+
+function quickIntegral(
+  first: Spread,
+  second: Spread,
+  options: QuickPowerOptions,
+  coarser: 1 | 2,
+): QuickIntegral | null {
+  const nu1 = first.units - 1;
+  const nu2 = second.units - 1;
+  const true1 = first.variance / first.units;
+  const true2 = second.variance / second.units;
+  const standardError = Math.sqrt(true1 + true2);
+  if (nu1 < 1 || nu2 < 1 || !(standardError > 0)) return null;
+  const nu = nu1 + nu2;
+  const quantile = (1 + options.confidence) / 2;
+  const cap = options.degreesOfFreedomCap ?? Infinity;
+  const alike = nu1 === nu2 && true1 === true2;
+  const { nodes, weights } = gaussLegendre(Math.max(32, 6 * Math.ceil(Math.sqrt(nu))) / coarser);
+  const bounds: number[] = [];
+  const shares: number[] = [];
+  // Two sides alike: the integrand is the same from either end.
+  for (let i = 0; i < (alike ? nodes.length / 2 : nodes.length); i++) {
+    const theta = ((nodes[i] + 1) * Math.PI) / 4;
+    const sine = Math.sin(theta);
+    const cosine = Math.cos(theta);
+    const share = sine * sine;
+    const density = betaDensity(share, nu1 / 2, nu2 / 2);
+    const weight = ((alike ? 2 : 1) * weights[i] * Math.PI * density * sine * cosine) / 2;
+    if (weight < 1e-13) continue;
+    const a = (true1 * share) / nu1;
+    const c = (true2 * cosine * cosine) / nu2;
+    const df = Math.min((a + c) ** 2 / ((a * a) / nu1 + (c * c) / nu2), cap);
+    shares.push(weight);
+    bounds.push((studentQuantile(quantile, df) * Math.sqrt(nu * (a + c))) / standardError);
+  }
+  const typicalBound = studentQuantile(quantile, Math.min(nu, cap));
+  // A tail one standard deviation wide must not fall between two points of the grid.
+  const widest = (coarser * 0.4) / (typicalBound + 1);
+  const scales = pooledScales(nu, 2 * coarser, 1e-12, widest);
+  // Bound once: an import looked up in the innermost loop costs as much as its call.
+  const tail = normalTail;
+  const rejecting = (ncp: number): number => {
+    let power = 0;
+    for (let i = 0; i < bounds.length; i++) {
+      const bound = bounds[i];
+      let given = 0;
+      for (const { value, weight } of scales) {
+        const reach = bound * value;
+        const away = reach - ncp;
+        if (away < -7) given += weight;
+        else if (away < 7) given += weight * tail(away);
+        if (reach + ncp < 7) given += weight * tail(reach + ncp);
+      }
+      power += shares[i] * given;
+    }
+    return power;
+  };
+  return { rejecting, typicalBound, standardError };
+}
+
+/**
+ * Power where the noise is partly borrowed: a noncentral t with the judgement's own degrees of freedom, which is right when
+ * these are fixed and a fair figure when they are Satterthwaite's.
+ */
+export function plainPower(standardError: number, degreesOfFreedom: number, confidence: number): WelchPower {
+  const bound = studentQuantile((1 + confidence) / 2, degreesOfFreedom);
+  const rejecting = (ncp: number): number =>
+    noncentralTTails(bound, degreesOfFreedom, ncp).upper +
+    noncentralTTails(-bound, degreesOfFreedom, ncp).lower;
+  return {
+    standardError,
+    powerAt: (gap) => rejecting(Math.abs(gap) / standardError),
+    gapAt: (power) => rootFrom(rejecting, power, bound, 1e-10) * standardError,
+  };
+}
+
+function rootFrom(
+  rejecting: (ncp: number) => number,
+  power: number,
+  typicalBound: number,
+  relative: number,
+): number {
+  const guess = typicalBound + normalQuantile(power);
+  let low = 0.9 * guess;
+  let high = 1.15 * guess;
+  while (high < 1000 && rejecting(high) < power) {
+    low = high;
+    high *= 1.5;
+  }
+  while (low > 1e-3 && rejecting(low) > power) low /= 2;
+  return findRoot((ncp) => rejecting(ncp) - power, low, high, { relative });
+}
+
 interface WeightedScale {
   /** S = √(χ²_ν/ν) at a point of the grid. */
   readonly value: number;
@@ -89,8 +236,8 @@ interface WeightedScale {
  * which converges faster than any power of its step since the density falls off doubly exponentially. Made once for all gaps,
  * which a tail computed call by call could not be.
  */
-function pooledScales(nu: number): readonly WeightedScale[] {
-  const step = Math.min(0.08, 0.33 / Math.sqrt(2 * nu));
+function pooledScales(nu: number, coarser = 1, least = 1e-15, widest = Infinity): readonly WeightedScale[] {
+  const step = Math.min(coarser * Math.min(0.08, 0.33 / Math.sqrt(2 * nu)), widest);
   const made: WeightedScale[] = [];
   let sum = 0;
   const add = (index: number): boolean => {
@@ -98,7 +245,7 @@ function pooledScales(nu: number): readonly WeightedScale[] {
     const weight = Math.exp(nu * (u - Math.expm1(2 * u) / 2));
     made.push({ value: Math.exp(u), weight });
     sum += weight;
-    return weight > 1e-15;
+    return weight > least;
   };
   add(0);
   for (let index = 1; add(index); index++);

@@ -14,6 +14,13 @@ export interface WelchOptions {
   readonly degreesOfFreedomCap?: number;
   /** Variance of the gap that is known apart from the units, such as the part of a sensor's step common to all runs. */
   readonly extraVariance?: number;
+  /** Further independent parts of the gap's variance, each with its own degrees of freedom. */
+  readonly extras?: readonly VariancePart[];
+}
+
+export interface VariancePart {
+  readonly variance: number;
+  readonly degreesOfFreedom: number;
 }
 
 export interface WelchResult {
@@ -28,17 +35,21 @@ export interface WelchResult {
 
 /**
  * Welch's test and interval of first − second, variances not assumed equal.
- * SE² = a + b + extra, a = s₁²/n₁, b = s₂²/n₂; df = SE⁴/(a²/(n₁−1) + b²/(n₂−1)).
+ * SE² = a + b + extra, a = s₁²/n₁, b = s₂²/n₂; df = SE⁴/(a²/(n₁−1) + b²/(n₂−1)), extra parts with degrees of freedom alike.
  * Null when there is no standard error: a side of fewer than two units, or no spread at all.
  * Source: Welch 1947, Biometrika 34, 28–35; Satterthwaite 1946, Biometrics Bulletin 2, 110–114.
  */
 export function welch(first: Side, second: Side, options: WelchOptions): WelchResult | null {
   const a = first.variance / first.units;
   const b = second.variance / second.units;
-  const extra = options.extraVariance ?? 0;
-  if (first.units < 2 || second.units < 2 || !(a + b > 0)) return null;
-  const total = a + b + extra;
-  const denominator = (a * a) / (first.units - 1) + (b * b) / (second.units - 1);
+  const extras = options.extras ?? [];
+  const known = extras.reduce((sum, { variance }) => sum + variance, 0);
+  if (first.units < 2 || second.units < 2 || !(a + b + known > 0)) return null;
+  const total = a + b + (options.extraVariance ?? 0) + known;
+  const denominator =
+    (a * a) / (first.units - 1) +
+    (b * b) / (second.units - 1) +
+    extras.reduce((sum, part) => sum + part.variance ** 2 / part.degreesOfFreedom, 0);
   const degreesOfFreedom = Math.min((total * total) / denominator, options.degreesOfFreedomCap ?? Infinity);
   const gap = first.mean - second.mean;
   const standardError = Math.sqrt(total);

@@ -9,7 +9,7 @@ import {
   side,
   UnitOfEvidence,
 } from './evidence';
-import { isOutside, welch, WelchOptions, WelchResult } from './welch';
+import { isOutside, Side, welch, WelchOptions, WelchResult } from './welch';
 
 /** Margin and clearance now and with more units of each cooler, if spread and gap stay as measured. */
 export function moreEvidence(
@@ -59,6 +59,30 @@ function lessOne(
   }));
 }
 
+/** A side without one of its units, from its mean and variance; right to rounding, which is all that a flag needs. */
+function lessOneValue({ mean, variance, values }: Evidence, value: number): Side {
+  const n = values.length;
+  const squares = (n - 1) * variance - (n / (n - 1)) * (value - mean) ** 2;
+  return { mean: (n * mean - value) / (n - 1), variance: Math.max(0, squares) / (n - 2), units: n - 1 };
+}
+
+/** Above so many units recounting each is too slow, and differs from the short way in no flag. */
+const MOST_RECOUNTED = 60;
+
+/** Each cooler that is left when one unit is taken out. */
+function eachLessOne(
+  cooler: JudgedCooler,
+  evidence: Evidence,
+): { readonly left: string; readonly rest: Side }[] {
+  if (evidence.unit === 'run' && evidence.values.length > MOST_RECOUNTED)
+    return evidence.values.map((value, index) => ({
+      left: `${cooler.name}, run ${evidence.unitNames[index]}`,
+      rest: lessOneValue(evidence, value),
+    }));
+  const evidenceOf = evidence.unit === 'mount' ? mountEvidence : runEvidence;
+  return lessOne(cooler, evidence.unit).map(({ left, rest }) => ({ left, rest: side(evidenceOf(rest)) }));
+}
+
 /** Which single units, left out, would change the flag. Null when too few would be left to judge. */
 export function leaveOneOut(
   a: JudgedCooler,
@@ -72,19 +96,17 @@ export function leaveOneOut(
   const [first, second] = [evidenceOf(a), evidenceOf(b)];
   const which: string[] = [];
   let tried = 0;
-  const tryWithout = (left: string, one: Evidence, other: Evidence, flipped: boolean): void => {
-    const least = Math.min(one.values.length, other.values.length);
-    const [x, y] = flipped ? [other, one] : [one, other];
-    const result = welch(side(x), side(y), {
+  const tryWithout = (left: string, x: Side, y: Side): void => {
+    const result = welch(x, y, {
       ...options,
-      degreesOfFreedomCap: degreesOfFreedomCap(unit, least),
+      degreesOfFreedomCap: degreesOfFreedomCap(unit, Math.min(x.units, y.units)),
     });
     tried++;
     if (result && isOutside(result) !== outside) which.push(left);
   };
   if (first.values.length > fewestLeft)
-    for (const { left, rest } of lessOne(a, unit)) tryWithout(left, evidenceOf(rest), second, false);
+    for (const { left, rest } of eachLessOne(a, first)) tryWithout(left, rest, side(second));
   if (second.values.length > fewestLeft)
-    for (const { left, rest } of lessOne(b, unit)) tryWithout(left, evidenceOf(rest), first, true);
+    for (const { left, rest } of eachLessOne(b, second)) tryWithout(left, side(first), rest);
   return tried === 0 ? null : { unit, units: tried, tips: which.length, which };
 }

@@ -156,6 +156,9 @@ function limits(pair: PairResult, input: JudgementInput): string[] {
     ...(pair.scope === 'runs only'
       ? ['remounting: each cooler was fitted once, or mounts were not recorded']
       : []),
+    ...(pair.basis === 'bench history' || pair.basis === 'borrowed mounts'
+      ? ['a cooler that is harder to fit than those its noise of remounting is taken from']
+      : []),
   ];
 }
 

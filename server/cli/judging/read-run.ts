@@ -1,10 +1,13 @@
 import { createReadStream } from 'node:fs';
 import { basename, resolve } from 'node:path';
 import { Metric } from '../../../shared/contracts/common';
-import { JudgedRun } from '../../../shared/contracts/judgement';
+import { Finding, JudgedRun } from '../../../shared/contracts/judgement';
 import { LogProblem } from '../../../shared/contracts/run-summary';
 import { reduceRun, startReading } from '../../../shared/reduction';
 import { BadRequest, RequestedRun } from './judge-request';
+
+/** Notes that tell of cells or rows not used; other notes of a log say that all is well. */
+const SKIPS = new Set(['bad-cells', 'blank-cells', 'rows-skipped', 'last-row-cut', 'end-block']);
 
 /** Where a run stands in the request, for messages and defaults. */
 interface RunPlace {
@@ -12,6 +15,8 @@ interface RunPlace {
   readonly name: string;
   readonly metric: Metric;
   readonly nominalWatts: number | null;
+  /** Takes what was noticed while a log was read, so that nothing skipped goes unsaid. */
+  readonly tell: (finding: Finding) => void;
 }
 
 /**
@@ -57,6 +62,9 @@ async function readLog(file: string, given: JudgedRun, place: RunPlace): Promise
   const value = place.metric === 'rise' ? summary.rise : summary.resistance;
   if (value === null)
     throw new BadRequest(`${file}: no column of watts, which resistance needs; add one, or judge the rise`);
+  for (const { code, level, text, atSeconds } of summary.findings)
+    if (level !== 'note' || SKIPS.has(code))
+      place.tell({ code, level, title: 'Log', text: `${file}: ${text}`, numbers: { atSeconds } });
   return {
     ...given,
     value,

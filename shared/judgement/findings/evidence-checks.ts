@@ -1,6 +1,8 @@
+import { PairResult } from '../../contracts/judgement';
 import { countWord } from '../words';
 import { formatNumber, formatRatio } from '../quantity-format';
 import { finding, PairCheck, quantity } from './finding';
+import { lentMounts } from './lent-mounts';
 
 /** No call: what is missing, which blocks sign-off. */
 export const noCall: PairCheck = ({ pair }) =>
@@ -8,10 +10,13 @@ export const noCall: PairCheck = ({ pair }) =>
     ? [finding(pair.notJudged.code.replaceAll(' ', '-'), 'stop', 'No call', pair.notJudged.reason)]
     : [];
 
+/** Whether the noise of remounting was not seen on both coolers but taken from elsewhere. */
+const isLent = ({ basis }: PairResult): boolean => basis === 'bench history' || basis === 'borrowed mounts';
+
 /** Few units of evidence. */
 export const fewUnits: PairCheck = ({ pair, resultA, resultB }) => {
   const least = Math.min(resultA.units, resultB.units);
-  if (pair.flag === 'not judged') return [];
+  if (pair.flag === 'not judged' || isLent(pair)) return [];
   const numbers = { unitsA: resultA.units, unitsB: resultB.units };
   if (pair.unitOfEvidence === 'mount' && least === 2)
     return [
@@ -54,6 +59,7 @@ export const unequalNumbers: PairCheck = ({ pair, resultA, resultB }) => {
 /** What remounting does, or that nothing is known of it. */
 export const mounts: PairCheck = (checked) => {
   const { pair, a, b, resultA, resultB } = checked;
+  if (isLent(pair)) return lentMounts(checked);
   if (pair.scope === 'mounts') {
     const both = (key: 'spreadBetweenMounts' | 'spreadBetweenRuns') =>
       [resultA[key], resultB[key]].filter((value) => value !== null);

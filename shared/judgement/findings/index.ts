@@ -10,6 +10,7 @@ import {
   unequalSpread,
 } from './evidence-checks';
 import { CheckedPair, PairCheck } from './finding';
+import { evidenceNeeded, secondOpinion, severalPairs, shortHistory, standOut } from './opinion-checks';
 import { orderAndDrift } from './order-checks';
 
 /** Checks in the order they are told among findings of the same weight. */
@@ -17,8 +18,12 @@ const CHECKS: readonly PairCheck[] = [
   noCall,
   fewUnits,
   singleUnits,
+  secondOpinion,
+  standOut,
   detectableGap,
+  evidenceNeeded,
   mounts,
+  shortHistory,
   orderAndDrift,
   heatLoad,
   ambient,
@@ -27,6 +32,7 @@ const CHECKS: readonly PairCheck[] = [
   sensor,
   unequalSpread,
   unequalNumbers,
+  severalPairs,
 ];
 
 const WEIGHT: Record<Finding['level'], number> = { stop: 0, caution: 1, note: 2 };
