@@ -17,6 +17,7 @@ export { gammaTails } from './incomplete-gamma';
 export { chiSquareCdf, chiSquareQuantile, chiSquareTail } from './chi-square';
 export { fCdf, fQuantile, fTail } from './fisher-f';
 export { noncentralTTails } from './noncentral-t';
+export { studentizedRangeQuantile, studentizedRangeTail } from './studentized-range';
 // Tools
 export { gaussLegendre } from './gauss-legendre';
 export { findRoot } from './find-root';

@@ -111,3 +111,42 @@ tableTest('noncentral_t', {
   lower: ([df, ncp, t, cdf]) => [n.noncentralTTails(t, df, ncp).lower, cdf],
   upper: ([df, ncp, t, , sf]) => [n.noncentralTTails(t, df, ncp).upper, sf],
 });
+tableTest('studentized_range_tails', {
+  upper: ([k, df, q, , sf]) => [n.studentizedRangeTail(q, k, df), sf],
+});
+tableTest('studentized_range_quantiles', {
+  quantile: ([k, df, p, q]) => [n.studentizedRangeQuantile(p, k, df), q],
+});
+
+describe('studentized range of two groups', () => {
+  // Q = √2 |T| exactly: the only independent reference below three degrees of freedom.
+  const freedoms = [0.5, 1, 1.2, 1.5, 1.9, 2.5, 4, 7.7, 20, 63, 300, 5000, 1e6, Infinity];
+  const cases = (points: readonly number[]) =>
+    freedoms.flatMap((df) => points.map((point) => ({ df, point, where: `df ${df} at ${point}` })));
+  it('has the tail of Student t', () => {
+    const rows = cases([0.01, 0.3, 1, 2, 3.5, 5, 8, 12, 20, 50, 300]).map(
+      ({ df, point, where }) =>
+        [where, n.studentizedRangeTail(point, 2, df), n.studentTwoSided(point / Math.SQRT2, df)] as const,
+    );
+    expectWithin(worstOf(rows.filter(([, , expected]) => expected > 1e-14)), 1e-10);
+  });
+  it('has the quantile of Student t', () => {
+    // Dyadic shares, so that 1 − p and p/2 are exact.
+    const rows = cases([2 ** -10, 0.25, 0.5, 0.875, 1 - 2 ** -5, 1 - 2 ** -10, 1 - 2 ** -20]).map(
+      ({ df, point, where }) =>
+        [
+          where,
+          n.studentizedRangeQuantile(point, 2, df),
+          Math.SQRT2 * n.studentQuantile(0.5 + point / 2, df),
+        ] as const,
+    );
+    expectWithin(worstOf(rows), 1e-10);
+  });
+  it('answers NaN off the domain', () => {
+    expect(n.studentizedRangeTail(3, 1, 10)).toBeNaN();
+    expect(n.studentizedRangeTail(3, 2.5, 10)).toBeNaN();
+    expect(n.studentizedRangeTail(3, 3, 0)).toBeNaN();
+    expect(n.studentizedRangeQuantile(1.1, 3, 10)).toBeNaN();
+    expect(n.studentizedRangeTail(-1, 3, 10)).toBe(1);
+  });
+});
