@@ -2,7 +2,7 @@
 export const plotlyCalls = {
   react: jest.fn((element: HTMLElement) => Promise.resolve(element)),
   purge: jest.fn(),
-  downloadImage: jest.fn(() => Promise.resolve('')),
+  toImage: jest.fn(() => Promise.resolve('data:image/svg+xml,%3Csvg%3E%3C%2Fsvg%3E')),
   hover: jest.fn(),
   unhover: jest.fn(),
 };

@@ -26,7 +26,7 @@ import { batchInWords, listInWords } from './batch-words';
 import { BatchTicks, TickState } from './batch-ticks';
 import { Compare } from './compare';
 import { ReRunBatch } from './re-run-batch';
-import { asCsv, saveFile } from './save-file';
+import { asCsv, saveFile } from '../ui/save-file/save-file';
 
 /** Rows added at a time, so that thousands of verdicts do not stall the page. */
 const ROWS_SHOWN = 100;
@@ -180,6 +180,7 @@ export class AuditPage {
         verdict.id,
       ]),
     );
-    saveFile(this.document, 'tenthmark-audit.csv', 'text/csv;charset=utf-8', asCsv([head, ...rows]));
+    const csv = new Blob([asCsv([head, ...rows])], { type: 'text/csv;charset=utf-8' });
+    saveFile(this.document, 'tenthmark-audit.csv', csv);
   }
 }

@@ -3,7 +3,7 @@ import { finRow, id } from '../verdicts/verdict-fixture';
 import { auditRow, pairAsReRun } from './audit-row';
 import { drawBatchTicks } from './batch-ticks';
 import { batchInWords, listInWords } from './batch-words';
-import { asCsv } from './save-file';
+import { asCsv } from '../ui/save-file/save-file';
 
 const reRun = (
   result: ReRun['result'],

@@ -57,7 +57,12 @@ export function batchInWords(
     changed > 0 ? `${verdicts(changed)} ${changed === 1 ? 'changes' : 'change'}` : null,
     cannot > 0 ? `${cannot} can’t be re-run` : null,
   ].filter((part) => part !== null);
-  const found = findings.length > 0 ? `${findings.join(', ')}.` : done > 0 ? 'Nothing differs so far.' : '';
+  const found =
+    findings.length > 0
+      ? `${findings.join(', ')}.`
+      : done > 0
+        ? 'Nothing differs so far.'
+        : 'The stored logs of each are read again.';
   if (!batch.running()) {
     const stopped =
       done < total ? `Stopped after ${done} of ${verdicts(total)}` : `Re-ran ${verdicts(total)}`;

@@ -11,7 +11,7 @@ import { NoticeBoard } from '../ui/notices/notice-board';
 import { shortDigest } from '../verdicts/verdict-words';
 import { AuditClient } from './audit-client';
 import { AuditTabs } from './audit-tabs';
-import { saveFile } from './save-file';
+import { saveFile } from '../ui/save-file/save-file';
 
 const PAGE_SIZE = 50;
 
@@ -84,12 +84,8 @@ export class LedgerPage {
     forkJoin([this.client.wholeLedger(), this.client.check()]).subscribe({
       next: ([entries, check]) => {
         this.exporting.set(false);
-        saveFile(
-          this.document,
-          'tenthmark-ledger.json',
-          'application/json',
-          JSON.stringify({ check, entries }, null, 2),
-        );
+        const json = JSON.stringify({ check, entries }, null, 2);
+        saveFile(this.document, 'tenthmark-ledger.json', new Blob([json], { type: 'application/json' }));
       },
       error: (error: unknown) => {
         this.exporting.set(false);

@@ -44,8 +44,3 @@ export function chartAxis(theme: ChartTheme): Partial<LayoutAxis> {
 
 /** No tool bar: the buttons under a chart are our own. */
 export const CHART_CONFIG: Partial<Config> = { displayModeBar: false, responsive: false };
-
-/** Hatching for a band, as a filled trace's pattern: it says noise. */
-export function hatch(theme: ChartTheme): object {
-  return { shape: '/', size: 6, solidity: 0.2, fgcolor: theme.edge, bgcolor: 'rgba(0,0,0,0)' };
-}

@@ -3,6 +3,7 @@ import { ComponentFixture, TestBed } from '@angular/core/testing';
 import { plotlyCalls } from '../../../testing/plotly-stub';
 import { FigureMaker, Plot } from './plot';
 import * as loader from './plotly-loader';
+import * as saving from './save-picture';
 
 @Component({
   imports: [Plot],
@@ -82,15 +83,15 @@ describe('Plot', () => {
     expect(readOut()).toBe('');
   });
 
-  it('saves the picture on the page’s ground', async () => {
+  it('saves the picture under the name it was given', async () => {
+    const save = jest.spyOn(saving, 'savePicture').mockResolvedValue();
     await open();
     button('Save picture').click();
-    await fixture.whenStable();
-    expect(plotlyCalls.downloadImage).toHaveBeenCalledWith(
-      expect.objectContaining({
-        layout: expect.objectContaining({ paper_bgcolor: expect.anything() as unknown }) as unknown,
-      }),
-      expect.objectContaining({ filename: 'runs', format: 'png' }),
+    expect(save).toHaveBeenCalledWith(
+      expect.anything(),
+      expect.objectContaining({ layout: expect.objectContaining({ height: 200 }) as unknown }),
+      'runs',
+      document,
     );
   });
 

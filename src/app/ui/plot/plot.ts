@@ -15,6 +15,7 @@ import { drawnWidth } from '../gap-rule/drawn-width';
 import { CHART_CONFIG, chartTemplate } from './chart-template';
 import { ChartTheme, PAPER_THEME, readChartTheme } from './chart-theme';
 import { Plotly, loadPlotly } from './plotly-loader';
+import { savePicture } from './save-picture';
 import { ThemeWatch } from './theme-watch';
 
 /** What to draw: traces and what differs from the template. */
@@ -109,17 +110,8 @@ export class Plot implements OnDestroy {
   }
 
   protected async savePicture(): Promise<void> {
-    const { theme, data, layout } = this.picture();
-    await this.plotly()?.downloadImage(
-      { data, layout: { ...layout, paper_bgcolor: theme.plate }, config: CHART_CONFIG },
-      {
-        format: 'png',
-        filename: this.fileName(),
-        width: layout.width,
-        height: layout.height,
-        scale: 2,
-      } as Parameters<Plotly['downloadImage']>[1],
-    );
+    const plotly = this.plotly();
+    if (plotly) await savePicture(plotly, this.picture(), this.fileName(), this.host.ownerDocument);
   }
 
   protected step(event: Event, by: number): void {

@@ -1,6 +1,6 @@
 /** Hands the reader a file made on this page. */
-export function saveFile(page: Document, name: string, type: string, content: string): void {
-  const address = URL.createObjectURL(new Blob([content], { type }));
+export function saveFile(page: Document, name: string, content: Blob): void {
+  const address = URL.createObjectURL(content);
   const link = page.createElement('a');
   link.href = address;
   link.download = name;
