@@ -41,5 +41,4 @@ export function judge(input: JudgementInput, method?: string): Judgement {
 
 export { ENGINE_VERSION } from './judge';
 export { welchPower } from './welch-power';
-export { headline } from './words';
 export { worstFirst } from './findings';

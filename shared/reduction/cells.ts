@@ -70,9 +70,6 @@ const SPACE_GROUPS = /^[+-]?\d{1,3}(?:[ \u00a0\u202f'’]\d{3})+(?:[.,]\d*)?$/;
 /** A unit written behind each number. */
 const TRAILING_UNIT = /\s*(?:°\s?[CFK]|º\s?[CF]|℃|℉|deg\s?[CF]?|mW|kW|[WwCFKs]|rpm|RPM|ms|sec|min|°)$/;
 
-/** Whether a number's only comma stands where a thousands comma would: `1,200` reads as 1200 or as 1.2. */
-export const looksGrouped = (cell: string): boolean => COMMA_GROUPS.test(cell.trim());
-
 /**
  * Reads one cell as a number; NaN when it is not one.
  * @param decimal the column's decimal mark; the other mark is then accepted only as a thousands mark.

@@ -6,8 +6,3 @@ export type { ReducedRun, RunChoices } from './reduce-run';
 
 // What a file's name says.
 export { guessFromName, matchCooler } from './guess-from-name';
-
-// Pieces shown or checked by themselves.
-export { findSteadyWindow, slopePer5Minutes } from './steady-window';
-export { fitPlateau } from './plateau-fit';
-export { meanError } from './initial-positive-sequence';

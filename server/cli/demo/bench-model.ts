@@ -34,10 +34,6 @@ export interface Readings {
   readonly fan: readonly number[];
 }
 
-/** The settled rise of the model without noise, °C. */
-export const settledRise = (settings: Pick<RunSettings, 'watts' | 'contact' | 'toAir'>): number =>
-  settings.watts * (settings.contact + settings.toAir);
-
 const toStep = (value: number, step: number): number => Math.round(value / step) * step;
 
 /** Runs the model second by second: first-order warm-up, slow wander of room, air flow and heater, noise of each sensor. */

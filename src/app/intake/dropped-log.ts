@@ -42,7 +42,9 @@ export const needsALook = (log: DroppedLog): boolean =>
 
 /** Whether the log is a run that can be sent once it is assigned. */
 export const isRun = (log: DroppedLog): boolean =>
-  (log.state === 'read' || log.state === 'sending') && log.readout?.summary != null && log.sameAs === null;
+  (log.state === 'read' || log.state === 'sending') &&
+  (log.readout?.summary ?? null) !== null &&
+  log.sameAs === null;
 
 /** Why this log cannot be sent as it stands; null when it can. */
 export function whatIsMissing({ assignment, choices }: DroppedLog): string | null {

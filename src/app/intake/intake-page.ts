@@ -91,7 +91,7 @@ export class IntakePage implements HoldsLogs {
         (log) =>
           log.state !== 'done' &&
           needsALook(log) &&
-          log.readout?.summary == null &&
+          (log.readout?.summary ?? null) === null &&
           log.state !== 'waiting' &&
           log.state !== 'reading',
       );

@@ -82,12 +82,12 @@ export class LogDetail {
   protected readonly notes = computed(() => this.summary()?.findings ?? []);
   protected readonly needsAmbient = computed(() => {
     const readout = this.log().readout;
-    return readout?.columnMap != null && readout.columnMap.ambient === null;
+    return readout?.columnMap?.ambient === null;
   });
 
   protected positionOf(key: keyof ColumnMap): string {
     const position = this.log().readout?.columnMap?.[key];
-    return position == null ? '' : String(position);
+    return position === undefined || position === null ? '' : String(position);
   }
 
   protected reasonOf(key: keyof ColumnMap): string {

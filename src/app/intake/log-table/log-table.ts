@@ -37,8 +37,7 @@ export class LogTable {
         .map(({ header, role }) => header || role)
         .join(', '),
       rise: log.readout?.summary ? formatNumber(log.readout.summary.rise, 2) : null,
-      resistance:
-        log.readout?.summary?.resistance == null ? null : formatNumber(log.readout.summary.resistance, 4),
+      resistance: resistanceWords(log.readout?.summary?.resistance ?? null),
       problems: problemsOf(log),
       findings: (log.readout?.summary?.findings ?? []).filter(({ level }) => level !== 'note'),
       missing: missing.get(log.id) ?? null,
@@ -70,6 +69,9 @@ export class LogTable {
 
 const sizeWords = (bytes: number): string =>
   bytes < MEGABYTE ? `${Math.max(1, Math.round(bytes / 1024))} kB` : `${(bytes / MEGABYTE).toFixed(1)} MB`;
+
+const resistanceWords = (value: number | null): string | null =>
+  value === null ? null : formatNumber(value, 4);
 
 function stateWords(log: DroppedLog): string {
   if (log.outcome?.outcome === 'stored') return 'stored';
