@@ -1,5 +1,5 @@
 import { studentQuantile } from '../../../shared/numerics';
-import { meanError } from '../../../shared/reduction';
+import { meanError } from '../../../shared/reduction/initial-positive-sequence';
 import { reference } from '../../support/reference';
 import { Random } from './random';
 

@@ -1,4 +1,5 @@
-import { findSteadyWindow, fitPlateau, slopePer5Minutes } from '../../../shared/reduction';
+import { fitPlateau } from '../../../shared/reduction/plateau-fit';
+import { findSteadyWindow, slopePer5Minutes } from '../../../shared/reduction/steady-window';
 import { Random } from './random';
 
 const seconds = (n: number, step = 1): Float64Array => Float64Array.from({ length: n }, (_, i) => i * step);
