@@ -18,6 +18,7 @@ import { load } from '../ui/loading/load';
 import { WaitingFor } from '../ui/loading/waiting-for';
 import { BatchTicks } from './batch-ticks';
 import { BulkBar } from './bulk-bar/bulk-bar';
+import { droppedFiles } from './dropped-files';
 import { needsALook } from './dropped-log';
 import { IntakeStore, OrderOfTesting } from './intake-store';
 import { HoldsLogs } from './leave-guard';
@@ -25,6 +26,7 @@ import { LogDetail } from './log-detail/log-detail';
 import { LogReaders } from './log-readers';
 import { LogSender } from './log-sender';
 import { LogTable } from './log-table/log-table';
+import { sameNumbers } from './same-numbers';
 
 /** Bringing runs into a study: drop many logs, look, assign, send, judge. */
 @Component({
@@ -35,9 +37,10 @@ import { LogTable } from './log-table/log-table';
   templateUrl: './intake-page.html',
   styleUrl: './intake-page.scss',
   host: {
-    '(dragover)': 'dragOver($event)',
-    '(dragleave)': 'over.set(false)',
-    '(drop)': 'drop($event)',
+    // Of the document: a file dropped beside the page would take the browser away from it.
+    '(document:dragover)': 'dragOver($event)',
+    '(document:dragleave)': 'over.set(false)',
+    '(document:drop)': 'drop($event)',
     '(document:keydown)': 'press($event)',
     '(window:beforeunload)': 'beforeUnload($event)',
   },
@@ -52,6 +55,12 @@ export class IntakePage implements HoldsLogs {
   private readonly bulk = viewChild(BulkBar);
 
   protected readonly orders: readonly OrderOfTesting[] = ['by their clocks', 'as listed', 'not known'];
+  /** What follows from how the order is known. */
+  protected readonly orderWords: Readonly<Record<OrderOfTesting, string>> = {
+    'by their clocks': 'From the logs’ own dates and times. Used to look for drift over the session.',
+    'as listed': 'You say that the runs stand below as they were run. Used to look for drift.',
+    'not known': 'Drift over the session is not looked for.',
+  };
   readonly id = input.required<string>();
   protected readonly setUp = load(() =>
     forkJoin({ study: this.client.study(this.id()), runs: this.client.runs(this.id()) }),
@@ -62,6 +71,9 @@ export class IntakePage implements HoldsLogs {
   protected readonly judging = signal(false);
   protected readonly problem = signal<string | null>(null);
 
+  protected readonly toGo = computed(
+    () => this.store.logs().filter(({ state }) => state === 'sending').length,
+  );
   protected readonly stored = computed(() =>
     this.store.logs().filter(({ outcome }) => outcome?.outcome === 'stored'),
   );
@@ -69,7 +81,8 @@ export class IntakePage implements HoldsLogs {
   protected readonly unlike = computed(() =>
     this.stored().filter(
       ({ outcome, readout }) =>
-        outcome?.outcome === 'stored' && outcome.run.summary.rise !== readout?.summary?.rise,
+        outcome?.outcome === 'stored' &&
+        !(readout?.summary && sameNumbers(readout.summary, outcome.run.summary)),
     ),
   );
   protected readonly countWords = computed(() => {
@@ -114,7 +127,9 @@ export class IntakePage implements HoldsLogs {
   }
 
   wouldLose(): boolean {
-    return this.store.logs().some(({ state }) => state !== 'done' && state !== 'failed');
+    return this.store
+      .logs()
+      .some(({ state, sameAs }) => state !== 'done' && state !== 'failed' && sameAs === null);
   }
 
   protected beforeUnload(event: BeforeUnloadEvent): void {
@@ -129,7 +144,15 @@ export class IntakePage implements HoldsLogs {
   protected drop(event: DragEvent): void {
     event.preventDefault();
     this.over.set(false);
-    this.store.add([...(event.dataTransfer?.files ?? [])]);
+    if (event.dataTransfer)
+      droppedFiles(event.dataTransfer).then(
+        (files) => this.store.add(files),
+        () => this.problem.set('The folder could not be read. Drop its files instead.'),
+      );
+  }
+
+  protected chooseOrder(how: string): void {
+    this.store.chosenOrder.set(this.orders.find((one) => one === how) ?? null);
   }
 
   protected choose(): void {

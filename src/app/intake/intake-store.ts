@@ -2,6 +2,7 @@ import { computed, inject, Injectable, signal } from '@angular/core';
 import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { ColumnMap } from '../../../shared/contracts/run-summary';
 import { Condition, IntakeOutcome, Run, Study, StudyCooler } from '../../../shared/contracts/studies';
+import { clashOf, markCopies, placeOf } from './clash';
 import { Assignment, DroppedLog, isRun, needsALook, whatIsMissing } from './dropped-log';
 import { conditionByPower, firstGuess } from './first-guess';
 import { LogChoices, LogReply } from './log-messages';
@@ -14,8 +15,14 @@ export type OrderOfTesting = 'by their clocks' | 'as listed' | 'not known';
 
 const startOf = (log: DroppedLog): string => log.readout?.summary?.startedAt ?? '';
 
-/** Steps of assigning that can be taken back. */
+/** Steps of assigning and leaving out that can be taken back. */
 const MOST_UNDO = 50;
+
+/** The largest log the server takes, bytes. */
+const LARGEST = 200 * 1024 * 1024;
+
+/** Whether its place is a matter of record by now. */
+const isFixed = ({ state }: DroppedLog): boolean => state === 'sending' || state === 'done';
 
 /** The logs of one drop: what was read, where each belongs, and whether they can be sent. */
 @Injectable()
@@ -24,7 +31,7 @@ export class IntakeStore {
   private nextId = 1;
   private study: Study | null = null;
   private stored: readonly Run[] = [];
-  private readonly undoStack = signal<readonly ReadonlyMap<number, Assignment>[]>([]);
+  private readonly undoStack = signal<readonly (readonly DroppedLog[])[]>([]);
 
   readonly logs = signal<readonly DroppedLog[]>([]);
   readonly selected = signal<ReadonlySet<number>>(new Set());
@@ -49,7 +56,7 @@ export class IntakeStore {
   readonly missing = computed(() => {
     const problems = new Map<number, string>();
     for (const log of this.toSend()) {
-      const missing = whatIsMissing(log) ?? this.clash(log);
+      const missing = whatIsMissing(log) ?? clashOf(log.assignment, this.othersThan(log.id));
       if (missing) problems.set(log.id, missing);
     }
     return problems;
@@ -87,7 +94,7 @@ export class IntakeStore {
       return {
         id: this.nextId++,
         file,
-        state: 'waiting',
+        state: file.size > LARGEST ? 'failed' : 'waiting',
         progress: 0,
         digest: null,
         readout: null,
@@ -95,18 +102,26 @@ export class IntakeStore {
         assignment,
         sameAs: null,
         outcome: null,
-        trouble: null,
+        trouble: file.size > LARGEST ? 'Over 200 MB. Split the log, one run a file.' : null,
       };
     });
     this.logs.update((logs) => [...logs, ...added]);
-    for (const { id, file, choices } of added) this.readers.read(id, file, choices);
+    for (const { id, file, choices, state } of added)
+      if (state === 'waiting') this.readers.read(id, file, choices);
     if (this.openId() === null && added.length > 0) this.openId.set(added[0].id);
   }
 
-  /** Takes logs out of the drop; nothing was sent of them. */
+  /** Takes logs out of the drop, but for those sent. Can be taken back. */
   remove(ids: ReadonlySet<number>): void {
-    for (const id of ids) this.readers.forget(id);
-    this.logs.update((logs) => logs.filter(({ id }) => !ids.has(id)));
+    const goes = (log: DroppedLog): boolean => ids.has(log.id) && !isFixed(log);
+    this.remember();
+    for (const { id } of this.logs().filter(goes)) this.readers.forget(id);
+    this.logs.update((logs) =>
+      markCopies(
+        logs.filter((log) => !goes(log)),
+        this.stored,
+      ),
+    );
     this.selected.set(new Set());
     if (!this.open()) this.openId.set(this.logs()[0]?.id ?? null);
   }
@@ -115,28 +130,37 @@ export class IntakeStore {
   assign(ids: ReadonlySet<number>, change: Partial<Assignment> & { readonly runFromName?: boolean }): void {
     this.remember();
     const { runFromName, ...fields } = change;
-    for (const id of ids)
+    for (const id of ids) {
       this.patch(id, (log) => {
+        if (isFixed(log)) return log;
         const guess =
           runFromName && this.study
             ? firstGuess(log.file.name, this.study.coolers, this.study.conditions)
             : null;
         const assignment = { ...log.assignment, ...fields, ...(guess?.run ? { run: guess.run } : {}) };
-        return {
-          ...log,
-          assignment,
-          choices: { ...log.choices, nominalWatts: this.wattsOf(assignment.conditionId) },
-        };
+        return { ...log, assignment };
       });
+      this.setWatts(id);
+    }
   }
 
   undo(): void {
     const before = this.undoStack().at(-1);
     if (!before) return;
     this.undoStack.update((stack) => stack.slice(0, -1));
-    this.logs.update((logs) =>
-      logs.map((log) => ({ ...log, assignment: before.get(log.id) ?? log.assignment })),
-    );
+    const now = new Map(this.logs().map((log) => [log.id, log]));
+    const places = new Map(before.map(({ id, assignment }) => [id, assignment]));
+    const placed = (log: DroppedLog): DroppedLog =>
+      isFixed(log) ? log : { ...log, assignment: places.get(log.id) ?? log.assignment };
+    const back = before.filter(({ id }) => !now.has(id));
+    const added = this.logs().filter(({ id }) => !places.has(id));
+    const logs = [...before.map((log) => placed(now.get(log.id) ?? log)), ...added];
+    this.logs.set(markCopies(logs, this.stored));
+    // Their readers have forgotten them.
+    for (const { id, file, choices, state } of back)
+      if (state !== 'failed') this.readers.read(id, file, choices);
+    for (const { id } of logs) this.setWatts(id);
+    if (!this.open()) this.openId.set(logs[0]?.id ?? null);
   }
 
   /** Reads the log again with other columns; `alike` does the same for every log with the same header. */
@@ -220,9 +244,10 @@ export class IntakeStore {
             progress: 1,
             digest: reply.digest,
             readout: reply.readout,
-            sameAs: this.sameAs(log.id, reply.digest),
           }),
         );
+        this.logs.update((logs) => markCopies(logs, this.stored));
+        this.setWatts(reply.id);
         break;
       case 'reduced':
         this.patch(reply.id, (log) => ({ ...log, readout: reply.readout }));
@@ -239,36 +264,22 @@ export class IntakeStore {
       assignment.conditionId ??
       conditionByPower(readout?.summary?.watts?.mean ?? null, this.study?.conditions ?? []);
     const run = assignment.run || String(this.logs().findIndex(({ id }) => id === log.id) + 1);
-    const choices = { ...log.choices, nominalWatts: this.wattsOf(conditionId) };
-    return { ...log, assignment: { ...assignment, conditionId, run }, choices };
+    return { ...log, assignment: { ...assignment, conditionId, run } };
   }
 
-  private sameAs(id: number, digest: string): string | null {
-    const earlier = this.logs().find((log) => log.id !== id && log.digest === digest);
-    return earlier?.file.name ?? this.stored.find((run) => run.digest === digest)?.fileName ?? null;
+  /** Places taken by the study's runs, those stored from here, and the other runs of the drop. */
+  private othersThan(id: number): Assignment[] {
+    const others = this.ordered().filter((log) => log.id !== id);
+    return [...others.map(({ assignment }) => assignment), ...this.stored.map(placeOf)];
   }
 
-  /** Another run of the same name at the same place; or mounts set for some logs of a cooler and not for others. */
-  private clash(log: DroppedLog): string | null {
-    const { coolerId, conditionId, mount, run } = log.assignment;
-    const beside = [
-      ...this.toSend()
-        .filter(({ id }) => id !== log.id)
-        .map(({ assignment }) => assignment),
-      ...this.stored.map((one) => ({
-        coolerId: one.coolerId,
-        conditionId: one.conditionId,
-        mount: one.mount,
-        run: one.name,
-      })),
-    ].filter((one) => one.coolerId === coolerId && one.conditionId === conditionId);
-    if (beside.some((one) => (one.mount === null) !== (mount === null)))
-      return 'mounts are set for some runs of this cooler and not for others';
-    if (beside.some((one) => one.mount === mount && one.run.trim() === run.trim()))
-      return mount === null
-        ? `there is another run ${run} of this cooler`
-        : `mount ${mount} has another run ${run}`;
-    return null;
+  /** The findings compare logged power with the condition's: another condition, another reduction. */
+  private setWatts(id: number): void {
+    const log = this.logs().find((one) => one.id === id);
+    if (!log || isFixed(log)) return;
+    const nominalWatts = this.wattsOf(log.assignment.conditionId);
+    if (nominalWatts !== log.choices.nominalWatts)
+      this.reduceWith(id, (choices) => ({ ...choices, nominalWatts }));
   }
 
   private reduceWith(id: number, change: (choices: LogChoices) => LogChoices): void {
@@ -276,7 +287,7 @@ export class IntakeStore {
     if (!log) return;
     const choices = change(log.choices);
     this.patch(id, (before) => ({ ...before, choices }));
-    this.readers.reduce(id, choices);
+    this.readers.reduce(id, log.file, choices);
   }
 
   private wattsOf(conditionId: string | null): number | null {
@@ -292,7 +303,7 @@ export class IntakeStore {
   }
 
   private remember(): void {
-    const now = new Map(this.logs().map(({ id, assignment }) => [id, assignment]));
+    const now = this.logs();
     this.undoStack.update((stack) => [...stack, now].slice(-MOST_UNDO));
   }
 

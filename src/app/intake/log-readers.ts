@@ -24,6 +24,8 @@ export class LogReaders {
   private readonly idle: Worker[] = [];
   private readonly queue: Job[] = [];
   private readonly home = new Map<number, Worker>();
+  /** Logs whose reading has not been answered yet. */
+  private readonly pending = new Set<number>();
 
   constructor() {
     inject(DestroyRef).onDestroy(() => this.workers.forEach((worker) => worker.terminate()));
@@ -31,19 +33,24 @@ export class LogReaders {
 
   read(id: number, file: File, choices: LogChoices): void {
     const home = this.home.get(id);
+    this.pending.add(id);
     // Read before, with other columns: the same worker reads it again.
     if (home) home.postMessage({ kind: 'read', id, file, choices });
     else this.queue.push({ id, file, choices });
     this.next();
   }
 
-  reduce(id: number, choices: LogChoices): void {
-    this.home.get(id)?.postMessage({ kind: 'reduce', id, choices });
+  /** Answers from memory, or reads the file again when its reader is gone. */
+  reduce(id: number, file: File, choices: LogChoices): void {
+    const home = this.home.get(id);
+    if (home) home.postMessage({ kind: 'reduce', id, choices });
+    else if (!this.pending.has(id)) this.read(id, file, choices);
   }
 
   forget(id: number): void {
     const waiting = this.queue.findIndex((job) => job.id === id);
     if (waiting >= 0) this.queue.splice(waiting, 1);
+    this.pending.delete(id);
     this.home.get(id)?.postMessage({ kind: 'forget', id });
     this.home.delete(id);
   }
@@ -63,19 +70,33 @@ export class LogReaders {
     if (this.workers.length >= readersFor(navigator.hardwareConcurrency || 2)) return null;
     const worker = makeLogWorker();
     worker.onmessage = ({ data }: MessageEvent<LogReply>) => {
-      this.replySubject.next(data);
-      if ((data.kind === 'read' || data.kind === 'failed') && !this.idle.includes(worker)) {
+      const ended = data.kind === 'read' || data.kind === 'failed';
+      // Left out while it was read: its answer is no longer wanted.
+      if (this.home.has(data.id)) {
+        if (ended) this.pending.delete(data.id);
+        this.replySubject.next(data);
+      }
+      if (ended && !this.idle.includes(worker)) {
         this.idle.push(worker);
         this.next();
       }
     };
-    worker.onerror = () => {
-      // A worker that could not start or broke down: its logs say so, the others go on.
-      for (const [id, home] of this.home)
-        if (home === worker)
-          this.replySubject.next({ kind: 'failed', id, text: 'The reader stopped. Drop the file again.' });
-    };
+    worker.onerror = () => this.broke(worker);
     this.workers.push(worker);
     return worker;
+  }
+
+  /** A reader that could not start or broke down: the log it read says so, the others go on with another reader. */
+  private broke(worker: Worker): void {
+    worker.terminate();
+    this.workers.splice(this.workers.indexOf(worker), 1);
+    if (this.idle.includes(worker)) this.idle.splice(this.idle.indexOf(worker), 1);
+    for (const [id, home] of [...this.home]) {
+      if (home !== worker) continue;
+      this.home.delete(id);
+      if (this.pending.delete(id))
+        this.replySubject.next({ kind: 'failed', id, text: 'The reader stopped. Drop the file again.' });
+    }
+    this.next();
   }
 }

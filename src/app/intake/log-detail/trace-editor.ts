@@ -74,12 +74,19 @@ export class TraceEditor {
   protected readonly riseTicks = computed(() => {
     const { low, high } = this.extent();
     const every = high - low > 30 ? 2 : 1;
+    // The unit stands once, at the highest number.
+    const highest = Math.floor(high / 20) * 20;
     const ticks = [];
     for (let rise = Math.ceil(low); rise <= high; rise += every)
       ticks.push({
         y: this.y()(rise),
         length: rise % 20 === 0 ? 14 : rise % 10 === 0 ? 10 : 5,
-        text: rise % 20 === 0 && rise !== 0 ? String(rise) : null,
+        text:
+          rise % 20 !== 0 || rise === 0
+            ? null
+            : rise === highest
+              ? `${rise}\u00a0°C over ambient`
+              : String(rise),
       });
     return ticks;
   });

@@ -1,7 +1,7 @@
 import { ChangeDetectionStrategy, Component, computed, inject, input } from '@angular/core';
 import { Condition, StudyCooler } from '../../../../shared/contracts/studies';
 import { FindingMark } from '../../ui/findings/finding-mark';
-import { formatNumber } from '../../ui/quantity/quantity-format';
+import { formatNumber, withUnit } from '../../ui/quantity/quantity-format';
 import { TraceSketchDrawing } from '../../ui/trace-sketch/trace-sketch-drawing';
 import { Assignment, DroppedLog, problemsOf } from '../dropped-log';
 import { IntakeStore } from '../intake-store';
@@ -38,12 +38,20 @@ export class LogTable {
         .join(', '),
       rise: log.readout?.summary ? formatNumber(log.readout.summary.rise, 2) : null,
       resistance: resistanceWords(log.readout?.summary?.resistance ?? null),
+      place: this.placeWords(log),
       problems: problemsOf(log),
       findings: (log.readout?.summary?.findings ?? []).filter(({ level }) => level !== 'note'),
       missing: missing.get(log.id) ?? null,
       fixed: log.state === 'done' || log.state === 'sending',
     }));
   });
+
+  /** Where the log belongs and what it says, in one line. */
+  private placeWords({ assignment, readout }: DroppedLog): string {
+    const { coolerId, mount, run } = assignment;
+    const place = `${coolerId === null ? 'Cooler not set' : this.store.coolerName(coolerId)}, ${mount === null ? 'mount not recorded' : `mount ${mount}`}, run ${run || 'not set'}`;
+    return readout?.summary ? `${place}; ${withUnit(formatNumber(readout.summary.rise, 2), '°C')}` : place;
+  }
 
   protected toggle(id: number, event: MouseEvent): void {
     const logs = this.store.logs();
