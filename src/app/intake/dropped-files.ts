@@ -6,7 +6,7 @@ export async function droppedFiles(transfer: DataTransfer): Promise<File[]> {
     .filter(({ kind }) => kind === 'file')
     .map((item) => item.webkitGetAsEntry());
   if (!entries.some((entry) => entry?.isDirectory)) return plain;
-  const files = await Promise.all(entries.map((entry) => (entry ? filesIn(entry) : [])));
+  const files = await Promise.all(entries.filter((entry) => entry !== null).map(filesIn));
   return files.flat();
 }
 

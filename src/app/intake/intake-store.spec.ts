@@ -120,7 +120,7 @@ describe('IntakeStore', () => {
     store.add([file]);
     expect(store.logs()[0]).toMatchObject({
       state: 'failed',
-      trouble: expect.stringMatching(/^Over 200 MB/),
+      trouble: expect.stringMatching(/^Over 200 MB/) as string,
     });
     expect(worker()).toBeUndefined();
   });
