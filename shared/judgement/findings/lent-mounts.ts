@@ -1,9 +1,10 @@
+import { Finding } from '../../contracts/judgement';
 import { showsRemounting } from '../evidence';
 import { formatNumber } from '../quantity-format';
 import { CheckedPair, finding, quantity } from './finding';
 
 /** Where the noise of remounting was taken from, and what that assumes. */
-export function lentMounts(checked: CheckedPair) {
+export function lentMounts(checked: CheckedPair): Finding[] {
   const { pair, a, b, input } = checked;
   if (pair.basis === 'borrowed mounts') {
     const [several, single] = showsRemounting(a) ? [a.name, b.name] : [b.name, a.name];
