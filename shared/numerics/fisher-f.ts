@@ -6,10 +6,12 @@ import { positiveQuantile } from './positive-quantile';
 function fTails(f: number, df1: number, df2: number): Tails {
   if (!(df1 > 0) || !(df2 > 0) || Number.isNaN(f)) return { lower: NaN, upper: NaN };
   if (f <= 0) return { lower: 0, upper: 1 };
+  if (f === Infinity) return { lower: 1, upper: 0 };
   if (df2 === Infinity) return gammaTails(df1 / 2, (df1 * f) / 2);
   const product = df1 * f;
   const sum = product + df2;
-  return betaTails(product / sum, df2 / sum, df1 / 2, df2 / 2);
+  const y = sum < Infinity ? df2 / sum : df2 / df1 / f;
+  return betaTails(sum < Infinity ? product / sum : 1, y, df1 / 2, df2 / 2);
 }
 
 /** P(F > f) with `df1` and `df2` > 0 degrees of freedom; `df2` may be Infinity. */

@@ -7,6 +7,10 @@ export {
   sampleVariance,
   sumOfSquaredDeviations,
 } from './exact-sums';
+export { nestedAnalysis, oneWayAnalysis } from './analysis-of-variance';
+export type { NestedAnalysis, NestedReadings, OneWayAnalysis, VarianceSource } from './analysis-of-variance';
+export { nestedComponents, oneWayComponents } from './variance-components';
+export type { NestedComponents, OneWayComponents } from './variance-components';
 // Distributions; tails are always computed on their own side
 export { normalCdf, normalDensity, normalQuantile, normalTail } from './normal';
 export { studentCdf, studentDensity, studentQuantile, studentTail, studentTwoSided } from './student-t';

@@ -29,6 +29,13 @@ describe.each(['strd_lew', 'strd_mavro', 'strd_michelso', 'strd_numacc1', 'strd_
       expect(sampleStandardDeviation(data)).toBeCloseTo(file.certified.sd, 12);
       expect(relativeError(sampleStandardDeviation(data), file.certified.sd)).toBeLessThan(1e-14);
     });
+    it('exact figures of the doubles, when they are no decimals', () => {
+      // A power of two changes no digit of a double, but so small a one leaves no short decimal.
+      const small = data.map((value) => value * 2 ** -60);
+      const exact = file.exact_from_ieee_doubles;
+      expect(relativeError(mean(small) * 2 ** 60, Number(exact.mean))).toBeLessThan(1e-15);
+      expect(relativeError(sampleStandardDeviation(small) * 2 ** 60, Number(exact.sd))).toBeLessThan(1e-15);
+    });
     it('the same digits in any order', () => {
       const shuffled = [...data].sort((a, b) => Math.sin(a * 12.9898) - Math.sin(b * 12.9898));
       expect(mean(shuffled)).toBe(mean(data));

@@ -23,3 +23,13 @@ export function worstOf(rows: Iterable<readonly [where: string, got: number, exp
   }
   return worst;
 }
+
+/** Fails, saying both values, unless `got` is within `relative` of `expected`. */
+export function expectClose(
+  got: number | null | undefined,
+  expected: number | undefined,
+  relative: number,
+): void {
+  const error = relativeError(got ?? NaN, expected ?? NaN);
+  expect(error <= relative ? 'close' : `${got} is not ${expected}: relative error ${error}`).toBe('close');
+}
