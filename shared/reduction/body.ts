@@ -1,5 +1,6 @@
 import * as Papa from 'papaparse';
 import { Collector, TextOf } from './collector';
+import { countByte } from './count-bytes';
 import { Head } from './head';
 
 /** What Papa Parse's own parser answers. */
@@ -66,6 +67,7 @@ class ByteRows {
   private readonly newline: number;
   private readonly decoder: InstanceType<typeof TextDecoder>;
   private text: TextRows | null = null;
+  private words = new Int32Array(0);
 
   constructor(
     private readonly head: Head,
@@ -82,59 +84,48 @@ class ByteRows {
 
   take(chunk: Uint8Array, last: boolean): BodyFault | null {
     if (this.text) return this.text.take(chunk, last);
-    let bytes = chunk;
-    if (this.rest.length > 0) {
-      bytes = new Uint8Array(this.rest.length + chunk.length);
-      bytes.set(this.rest);
-      bytes.set(chunk, this.rest.length);
-    }
+    // In memory of its own, which begins on a whole word for `countByte`.
+    const bytes = new Uint8Array(this.rest.length + chunk.length);
+    bytes.set(this.rest);
+    bytes.set(chunk, this.rest.length);
     if (bytes.includes(QUOTE)) {
       this.text = new TextRows(this.head, this.collector, this.encoding, this.row);
       return this.text.take(bytes, last);
     }
+    this.words = new Int32Array(bytes.buffer, 0, bytes.buffer.byteLength >> 2);
     let at = 0;
     while (at < bytes.length) {
-      const next = this.takeLine(bytes, at, last);
-      if (next === -1) break;
-      at = next;
+      let end = bytes.indexOf(this.newline, at);
+      if (end === -1) {
+        if (!last) break;
+        end = bytes.length;
+      }
+      this.takeLine(bytes, at, end);
+      at = end + 1;
     }
     this.rest = bytes.slice(at);
     return this.rest.length > LONGEST_LINE ? { fault: 'line too long', row: this.row } : null;
   }
 
-  /** Takes one line; returns where the next begins, or -1 when this one may go on in the next chunk. */
-  private takeLine(bytes: Uint8Array, from: number, last: boolean): number {
-    const { starts, ends, delimiter, newline } = this;
+  private takeLine(bytes: Uint8Array, from: number, end: number): void {
+    const { starts, ends, delimiter } = this;
+    const to = end > from && bytes[end - 1] === RETURN ? end - 1 : end;
     const needed = starts.length;
-    const length = bytes.length;
     let cells = 0;
     let at = from;
     let cellStart = from;
-    let code = 0;
-    for (; at < length && cells < needed; at += 1) {
-      code = bytes[at];
-      if (code === delimiter) {
-        starts[cells] = cellStart;
-        ends[cells] = at;
-        cells += 1;
-        cellStart = at + 1;
-      } else if (code === newline) break;
+    for (; at < to && cells < needed; at += 1) {
+      if (bytes[at] !== delimiter) continue;
+      starts[cells] = cellStart;
+      ends[cells] = at;
+      cells += 1;
+      cellStart = at + 1;
     }
-    // The cells behind the needed ones are counted in a loop of their own: it is most of the work of a wide log.
-    if (code !== newline) {
-      for (; at < length; at += 1) {
-        code = bytes[at];
-        if (code === delimiter) cells += 1;
-        else if (code === newline) break;
-      }
-    }
-    if (at === length && !last) return -1;
-    const to = at > from && bytes[at - 1] === RETURN ? at - 1 : at;
     if (cells < needed) {
       starts[cells] = cellStart;
       ends[cells] = to;
     }
-    cells += 1;
+    cells += 1 + countByte(bytes, this.words, delimiter, at, to);
     if (cells !== this.head.width || !this.collector.takeBytes(bytes, starts, ends, this.row, this.textOf)) {
       this.collector.take({
         number: this.row,
@@ -142,7 +133,6 @@ class ByteRows {
       });
     }
     this.row += 1;
-    return at + 1;
   }
 
   private readonly textOf: TextOf = (bytes, from, to) => {

@@ -99,6 +99,8 @@ export class Collector {
   readonly track: TimeTrack;
   readonly kept: readonly KeptColumn[];
   readonly rows = new GrowingFloats();
+  /** Rows taken as readings. */
+  readings = 0;
   readonly odd: OddRow[] = [];
   oddCount = 0;
   /** Cells a row must have. */
@@ -140,6 +142,7 @@ export class Collector {
       return;
     }
     this.rows.push(number);
+    this.readings += 1;
     for (const kept of this.kept) kept.take(cells[kept.column.position], number);
   }
 
@@ -159,6 +162,7 @@ export class Collector {
       if (!this.track.takeText(textOf(bytes, from, to), date)) return false;
     }
     this.rows.push(row);
+    this.readings += 1;
     for (const kept of this.kept) {
       const { position: at } = kept.column;
       kept.takeBytes(bytes, starts[at], ends[at], row, textOf);
@@ -176,7 +180,7 @@ export class Collector {
       row: row.number,
       kind: again ? 'header again' : kind,
       text: row.cells.find((cell) => cell.trim() !== '')?.trim() ?? '',
-      after: this.rows.length,
+      after: this.readings,
     });
   }
 }

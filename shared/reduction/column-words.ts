@@ -32,7 +32,7 @@ export const HEAT_SOURCE: RoleWords = {
     [/\btemp\w*\b|\bt ?\d*\b|\btc ?\d*\b|\bprobe\b|\bsensor\b|\bchannel\b|\bch ?\d+\b|\bthermocouple\b/, 1],
   ],
   against:
-    /\b(ambient|amb|room|air|inlet|intake|outlet|exhaust|umgebung\w*|raum\w*|vrm|ssd|hdd|drive|motherboard|mainboard|memory|dimm|chipset|pch|psu|delta|rise|dt|δt|water|coolant|liquid)\b|δ/,
+    /\b(ambient|amb|room|air|inlet|intake|outlet|exhaust|umgebung\w*|raum\w*|vrm|ssd|hdd|drive|motherboard|mainboard|memory|dimm|chipset|pch|psu|delta|rise|dt|δt|water|coolant|liquid|power|watts?|heat load|current|voltage|vid|fan|rpm|speed|usage|duty|clock|utili[sz]ation|leistung|puissance)\b|δ/,
 };
 
 export const AMBIENT: RoleWords = {
@@ -78,15 +78,10 @@ export const TIME: RoleWords = {
   against: /\b(uptime|response|latency|boot|period|interval|dauer)\b/,
 };
 
-/** Whether a header's words rule a role out. */
-export function speaksAgainst(words: string, role: RoleWords): boolean {
-  const plain = plainWords(words);
-  return role.against.test(plain) || NEVER.test(plain);
-}
+/** Whether the words of a header, made comparable, rule a role out. */
+export const speaksAgainst = (words: string, role: RoleWords): boolean =>
+  role.against.test(words) || NEVER.test(words);
 
 /** Weight of a header's words for a role, 0 when they say nothing or speak against it. */
-export function wordScore(words: string, role: RoleWords): number {
-  if (speaksAgainst(words, role)) return 0;
-  const plain = plainWords(words);
-  return role.strong.find(([pattern]) => pattern.test(plain))?.[1] ?? 0;
-}
+export const wordScore = (words: string, role: RoleWords): number =>
+  speaksAgainst(words, role) ? 0 : (role.strong.find(([pattern]) => pattern.test(words))?.[1] ?? 0);

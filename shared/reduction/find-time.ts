@@ -47,7 +47,7 @@ function numericTime(column: TableColumn): FoundTime {
       unsure: false,
     };
   }
-  const words = column.header.toLowerCase();
+  const words = column.allWords;
   for (const [pattern, scale, name] of [
     [/milli/, 0.001, 'ms'],
     [/\bsec|second/, 1, 's'],
@@ -135,7 +135,7 @@ export function findTime(columns: readonly TableColumn[]): FoundTime | null {
     .map((column) => ({
       column,
       score:
-        Math.max(wordScore(column.header, TIME), wordScore(column.words, TIME)) +
+        Math.max(wordScore(column.allWords, TIME), wordScore(column.words, TIME)) +
         (column.unit?.quantity === 'time' ? 3 : 0) -
         (column.unit && column.unit.quantity !== 'time' ? 20 : 0),
     }))

@@ -10,8 +10,9 @@ import { Problems, columnHeader } from './problems';
 import { readingFindings } from './reading-findings';
 import { TableColumn } from './table-column';
 import { TimeAxis, settleAxis } from './time-axis';
+import { startInTitles } from './title-start';
 import { SettledTimes } from './time-source';
-import { doubtOf } from './time-doubts';
+import { asStopwatch, doubtOf } from './time-doubts';
 import { count, fixed, quoted } from './words';
 
 /** What reading a log has found out before its end. */
@@ -78,10 +79,10 @@ const withoutReadings = (table: ReadTable): ReadLog => ({
 function axisOf(
   table: ReadTable,
   time: FoundTime,
-  collector: Collector,
+  rows: Float64Array,
   settled: SettledTimes,
 ): TimeAxis | null {
-  const axis = settleAxis(settled.seconds, collector.rows.view(), time.source.kind);
+  const axis = settleAxis(asStopwatch(time, settled.seconds), rows, time.source.kind);
   if (!('fault' in axis)) return axis;
   const still = axis.fault === 'standing still';
   table.problems.add(
@@ -89,7 +90,7 @@ function axisOf(
     still
       ? 'The time is the same in every row. Expected times that rise from row to row; choose another column for time.'
       : `The time falls back at ${fixed(axis.falls, 0)} places, first in this row. Expected times that rise from row to row; sort the log by time, or choose another column.`,
-    collector.rows.view()[axis.at],
+    rows[axis.at],
     columnHeader(table.columns[time.source.position]),
   );
   return null;
@@ -120,7 +121,7 @@ function withoutEmptyColumns(table: ReadTable, collector: Collector, map: Column
   for (const [role, key] of Object.entries(ROLE_KEYS)) {
     const kept = collector.kept.find(({ column }) => column.position === map[key]);
     if (role === 'time' || !kept) continue;
-    const total = collector.rows.length;
+    const total = collector.readings;
     const empty = kept.blankCount + kept.badCount === total;
     if (!empty && kept.badCount <= total / 2) continue;
     const example = kept.bad[0] ?? kept.firstBlank;
@@ -135,6 +136,14 @@ function withoutEmptyColumns(table: ReadTable, collector: Collector, map: Column
     usable[key] = null;
   }
   return usable;
+}
+
+/** Start as the log tells it: by its own dates, else by a title line that dates the zero of its seconds. */
+function startOf(table: ReadTable, time: FoundTime, settled: SettledTimes, axis: TimeAxis): string | null {
+  if (settled.dated) return isoFromSeconds(axis.start);
+  const wholeLog = axis.from === 0 && !axis.reversed;
+  const titled = time.source.kind === 'number' && wholeLog ? startInTitles(table.head.titles) : null;
+  return titled === null ? null : isoFromSeconds(titled + axis.start);
 }
 
 function tellUnclearDate(table: ReadTable, time: FoundTime, settled: SettledTimes): void {
@@ -164,14 +173,17 @@ export function finishLog(table: ReadTable, collector: Collector | null): ReadLo
     });
     return { log: null, problems: problems.list };
   }
-  const axis = axisOf(table, found.time, collector, settled);
+  const rowsTaken = collector.rows.release();
+  const axis = axisOf(table, found.time, rowsTaken, settled);
   if (!axis) return withoutReadings(table);
   const timeColumn = columns[found.time.source.position];
   const pick = (values: Float64Array): Float64Array => {
-    const used = values.slice(axis.from, axis.to);
+    const used = values.subarray(axis.from, axis.to);
     return axis.reversed ? used.reverse() : used;
   };
-  const kept = new Map(collector.kept.map((column) => [column.column.position, pick(column.values.view())]));
+  const kept = new Map(
+    collector.kept.map((column) => [column.column.position, pick(column.values.release())]),
+  );
   const { map, reasons } = settleCandidates(table, kept);
   reasons.set(timeColumn.position, found.time.reason);
   if (found.time.source.datePosition !== null)
@@ -179,7 +191,7 @@ export function finishLog(table: ReadTable, collector: Collector | null): ReadLo
   const doubt = doubtOf(found.time, axis.seconds);
   if (doubt) problems.add('time-unit-unclear', doubt, head.headerRow, columnHeader(timeColumn));
   tellUnclearDate(table, found.time, settled);
-  const rows = pick(collector.rows.view());
+  const rows = pick(rowsTaken);
   const fullMap = withoutEmptyColumns(table, collector, { ...map, time: doubt ? null : timeColumn.position });
   return {
     log: {
@@ -187,7 +199,7 @@ export function finishLog(table: ReadTable, collector: Collector | null): ReadLo
       seconds: axis.seconds,
       rows: Uint32Array.from(rows),
       kept,
-      startedAt: settled.dated ? isoFromSeconds(axis.start) : null,
+      startedAt: startOf(table, found.time, settled, axis),
       findings: [...axis.findings, ...readingFindings(table, collector, fullMap, axis, rows)],
     },
     problems: problems.list,

@@ -24,6 +24,8 @@ export interface Head {
   readonly sample: readonly Row[];
   /** Cells that the rows of readings usually have. */
   readonly width: number;
+  /** Lines above the header, their cells joined by spaces. */
+  readonly titles: readonly string[];
 }
 
 /** Why there is no table to be found, and the row that shows it. */
@@ -238,5 +240,6 @@ export function findHead(text: string): Head | HeadFault {
     firstDataRow,
     sample,
     width,
+    titles: above.filter((row) => row !== header && row !== units).map((row) => row.cells.join(' ').trim()),
   };
 }

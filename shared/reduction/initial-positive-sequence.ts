@@ -32,17 +32,18 @@ export function meanError(values: Float64Array, mean: number): AutocorrelatedMea
   const series = blocked(values);
   const n = series.length;
   const d = Float64Array.from(series, (value) => value - mean);
-  const covariance = (lag: number): number => {
-    let sum = 0;
-    for (let i = 0; i + lag < n; i += 1) sum += d[i] * d[i + lag];
+  /** c[lag] + c[lag + 1] in one pass, twice as fast as one after the other. */
+  const pairOf = (lag: number): number => {
+    let sum = d[n - 1 - lag] * d[n - 1];
+    for (let i = 0; i + lag + 1 < n; i += 1) sum += d[i] * (d[i + lag] + d[i + lag + 1]);
     return sum / n;
   };
-  const c0 = covariance(0);
+  const c0 = d.reduce((sum, value) => sum + value * value, 0) / n;
   if (c0 === 0) return { standardError: 0, effectiveReadings: values.length };
   let total = 0;
   let smallest = Infinity;
   for (let lag = 0; lag + 1 < n; lag += 2) {
-    const pair = (lag === 0 ? c0 : covariance(lag)) + covariance(lag + 1);
+    const pair = pairOf(lag);
     if (pair <= 0) break;
     smallest = Math.min(smallest, pair);
     total += smallest;

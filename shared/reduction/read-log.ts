@@ -42,8 +42,14 @@ class LogReader implements LogReading {
   }
 
   write(bytes: Uint8Array): void {
-    for (let at = 0; at < bytes.length && !this.stopped; at += AT_ONCE) {
-      this.hold(bytes.subarray(at, at + AT_ONCE));
+    for (let at = 0; at < bytes.length && !this.stopped;) {
+      const part = bytes.subarray(at, at + (this.table ? AT_ONCE : HEAD_BYTES));
+      at += part.length;
+      if (this.table && this.heldBytes === 0 && part.length >= HEAD_BYTES) {
+        this.tell(this.table.body?.take(part, false) ?? null);
+        continue;
+      }
+      this.hold(part);
       if (this.heldBytes < HEAD_BYTES) continue;
       if (this.table) this.passOn(false);
       else if (this.heldBytes >= Math.min(2 * this.triedAt, HEAD_AT_MOST)) this.beginTable(false);

@@ -11,7 +11,7 @@ const rowList = (rows: readonly number[]): string =>
 /** Tells of lines that are no readings: a header again, totals at the end, rows cut short. */
 function oddRowFindings(collector: Collector): RunFinding[] {
   const findings: RunFinding[] = [];
-  const total = collector.rows.length;
+  const total = collector.readings;
   const note = (code: string, level: RunFinding['level'], text: string) =>
     findings.push({ code, level, text, atSeconds: null });
   const headers = collector.odd.filter((odd) => odd.kind === 'header again');
@@ -107,6 +107,6 @@ export function readingFindings(
   return oddRowFindings(collector).concat(
     collector.kept
       .filter((kept) => used.has(kept.column.position))
-      .flatMap((kept) => cellFindings(kept, name(kept.column), collector.rows.length, timeOf)),
+      .flatMap((kept) => cellFindings(kept, name(kept.column), collector.readings, timeOf)),
   );
 }

@@ -1,3 +1,4 @@
+import { plainWords } from './column-words';
 import { DecimalMark, decimalOf, isNoValue, parseNumber } from './cells';
 import { Head, kindOf } from './head';
 import { Unit, splitHeader, unitOf } from './units';
@@ -6,7 +7,9 @@ import { Unit, splitHeader, unitOf } from './units';
 export interface TableColumn {
   readonly position: number;
   readonly header: string;
+  /** The header without its unit, made comparable; and with it. */
   readonly words: string;
+  readonly allWords: string;
   readonly unit: Unit | null;
   readonly cells: readonly string[];
   readonly decimal: DecimalMark;
@@ -15,7 +18,7 @@ export interface TableColumn {
 }
 
 /** Rows that show what a column holds, and rows searched for a decimal mark. */
-const SHOWN_ROWS = 30;
+const SHOWN_ROWS = 20;
 const SEARCHED_ROWS = 300;
 
 function mostlyOf(cells: readonly string[]): TableColumn['mostly'] {
@@ -53,7 +56,8 @@ export function describeColumns(head: Head): TableColumn[] {
     return {
       position,
       header,
-      words: parts.words,
+      words: plainWords(parts.words),
+      allWords: plainWords(header),
       unit,
       cells,
       decimal: mark === 'unclear' ? 'either' : mark,

@@ -30,20 +30,20 @@ const TOTALS = 8;
 
 /** Median of the steps above zero; 1 when there are none. */
 export function usualStep(seconds: ArrayLike<number>): number {
-  const steps: number[] = [];
   // Ten thousand steps from all over a long log tell its rate as well as all do.
   const stride = Math.max(1, Math.floor(seconds.length / 10000));
+  const steps = new Float64Array(Math.ceil(seconds.length / stride));
+  let n = 0;
   for (let i = 1; i < seconds.length; i += stride) {
     const step = seconds[i] - seconds[i - 1];
-    if (step > 0) steps.push(step);
+    if (step > 0) steps[n++] = step;
   }
-  steps.sort((a, b) => a - b);
-  return steps.length === 0 ? 1 : steps[Math.floor(steps.length / 2)];
+  return n === 0 ? 1 : steps.subarray(0, n).sort()[Math.floor(n / 2)];
 }
 
 /**
  * Puts the times of a log in order: midnight, a clock set back, a log begun anew, a block of totals at the end.
- * @param raw seconds as read; `rows` the physical row of each
+ * @param raw seconds as read, put right in place; `rows` the physical row of each
  * @param kind how the log writes its time; only a clock can pass midnight
  */
 export function settleAxis(
@@ -52,7 +52,7 @@ export function settleAxis(
   kind: 'number' | 'clock' | 'stamp',
 ): TimeAxis | TimeFault {
   const findings: RunFinding[] = [];
-  let seconds = Float64Array.from(raw);
+  const seconds = raw;
   const fallsAt = (): number[] => {
     const falls: number[] = [];
     for (let i = 1; i < seconds.length; i += 1) if (seconds[i] < seconds[i - 1]) falls.push(i);
@@ -62,7 +62,7 @@ export function settleAxis(
   let reversed = false;
   if (falls.length > 0.5 * (seconds.length - 1)) {
     reversed = true;
-    seconds = seconds.reverse();
+    seconds.reverse();
     falls = fallsAt();
     findings.push({
       code: 'newest-first',
@@ -77,12 +77,15 @@ export function settleAxis(
   let to = seconds.length;
   let added = 0;
   const rowOf = (i: number): number => rows[reversed ? seconds.length - 1 - i : i];
-  const original = Float64Array.from(seconds);
+  // As read: `seconds` is put right on the way.
+  let before = seconds[0];
+  let first = seconds[0];
   let next = 0;
   for (let i = 1; i < seconds.length; i += 1) {
+    const now = seconds[i];
     if (next < falls.length && falls[next] === i) {
       next += 1;
-      const fall = original[i - 1] - original[i];
+      const fall = before - now;
       if (kind !== 'stamp' && i >= seconds.length - TOTALS && i > TOTALS && fall <= HALF_DAY) {
         to = i;
         findings.push({
@@ -93,19 +96,11 @@ export function settleAxis(
         });
         break;
       }
-      const length = original[i - 1] - original[from];
+      const length = before - first;
       if (kind === 'clock' && fall > HALF_DAY) added += DAY;
-      else if (
-        kind === 'clock' &&
-        Math.abs(fall + step - HALF_DAY) <= 5 * step + 1 &&
-        original[i - 1] < 13 * 3600
-      )
+      else if (kind === 'clock' && Math.abs(fall + step - HALF_DAY) <= 5 * step + 1 && before < 13 * 3600)
         added += HALF_DAY;
-      else if (
-        kind !== 'stamp' &&
-        fall > 60 &&
-        original[i] <= original[from] + Math.max(10 * step, 0.02 * length)
-      ) {
+      else if (kind !== 'stamp' && fall > 60 && now <= first + Math.max(10 * step, 0.02 * length)) {
         findings.push({
           code: 'restart',
           level: 'caution',
@@ -113,6 +108,7 @@ export function settleAxis(
           atSeconds: 0,
         });
         from = i;
+        first = now;
         added = 0;
       } else {
         added += fall + step;
@@ -120,13 +116,14 @@ export function settleAxis(
           code: 'clock-set-back',
           level: 'caution',
           text: `The clock goes back by ${stretch(fall)} at row ${rowOf(i)}. The readings after it are taken to follow on at the usual ${stretch(step)}.`,
-          atSeconds: original[i - 1] - original[from],
+          atSeconds: length,
         });
       }
     }
-    seconds[i] = original[i] + added;
+    seconds[i] = now + added;
+    before = now;
   }
-  const stamped = seconds.slice(from, to);
+  const stamped = seconds.subarray(from, to);
   const spread = spreadStamps(stamped);
   if (spread) {
     findings.push({

@@ -7,6 +7,16 @@ const LONGEST_RUN = 7 * 86400;
 /** A stopwatch in minutes and seconds, read as hours and minutes, lasts a night or longer. s */
 const LONGEST_BY_MINUTES = 8 * 3600;
 
+/**
+ * Times of a clock in two parts, read as hours and minutes, once the whole log is known: past 24:00 they can only be
+ * minutes and seconds, a sixtieth of what was read.
+ */
+export function asStopwatch(time: FoundTime, seconds: Float64Array): Float64Array {
+  if (!time.unsure || time.source.kind !== 'clock' || !seconds.some((value) => value >= 86400))
+    return seconds;
+  return seconds.map((value) => value / 60);
+}
+
 /** What is doubtful about a time whose unit was not named, once the whole log is read; null when nothing is. */
 export function doubtOf(time: FoundTime, seconds: Float64Array): string | null {
   if (!time.unsure) return null;

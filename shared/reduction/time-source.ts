@@ -105,7 +105,7 @@ export class TimeTrack {
 
   /** The times in seconds, from midnight 1970-01-01 when the log has dates whose order is known. */
   settle(asked: DateOrder | undefined): SettledTimes {
-    const seconds = this.seconds.view();
+    const seconds = this.seconds.release();
     if (this.dates.length === 0) {
       return { seconds, dated: this.source.epoch, dateUnclear: null };
     }
@@ -113,13 +113,12 @@ export class TimeTrack {
     const same = this.dates.every(({ date }) => date.first === date.second);
     const order = possible.length === 1 || same ? possible[0] : (asked ?? null);
     const days = this.dates.map(({ date }) => dayNumber(date, order ?? 'day first'));
-    const dated = new Float64Array(seconds.length);
     for (let d = 0; d < days.length; d += 1) {
       const to = this.dates[d + 1]?.from ?? seconds.length;
       // Unclear on one day only: the day is the same in each reading, so the time inside the run is not in doubt.
-      for (let i = d === 0 ? 0 : this.dates[d].from; i < to; i += 1) dated[i] = seconds[i] + days[d] * 86400;
+      for (let i = d === 0 ? 0 : this.dates[d].from; i < to; i += 1) seconds[i] += days[d] * 86400;
     }
-    return { seconds: dated, dated: order !== null, dateUnclear: order === null ? this.dates[0].date : null };
+    return { seconds, dated: order !== null, dateUnclear: order === null ? this.dates[0].date : null };
   }
 
   /** Orders of day and month that make the dates of the log follow one another most closely. */

@@ -128,7 +128,11 @@ export interface HeaderParts {
 
 /** The last brackets of a header, and what follows them. */
 const BRACKETED = /^(.*)[[({]\s*([^[\](){}]+?)\s*[\])}]([^[\](){}]*)$/;
-const TAIL = /^(.*?)(\s*[,;/:|]\s*|\s+in\s+|[\s_]+)([^\s_,;:|()[\]]+|deg\.? [cf])$/i;
+/** The last word of a header and what parts it from the others: first units with a stroke of their own, such as 1/min. */
+const TAILS = [
+  /^(.*?)(\s*[,;:|]\s*|\s+in\s+|[\s_]+)([^\s_,;:|()[\]]*\/[^\s_,;:|()[\]]+|deg\.? [cf])$/i,
+  /^(.*)(\s*[,;/:|]\s*|[\s_]+)([^\s_,;:|/()[\]]+)$/i,
+];
 
 /** Splits a header into its words and its unit, where it names one. */
 export function splitHeader(header: string): HeaderParts {
@@ -139,14 +143,16 @@ export function splitHeader(header: string): HeaderParts {
     if (found) return { words: `${bracketed[1]} ${bracketed[3]}`.trim(), unit: found };
     // `CPU (Tctl) °C`: the brackets hold something else.
   }
-  const tail = TAIL.exec(text);
-  if (tail) {
-    const found = unitOf(tail[3]);
+  for (const pattern of TAILS) {
+    const tail = pattern.exec(text);
+    const found = tail ? unitOf(tail[3]) : null;
+    if (!tail || !found) continue;
     // `Probe A` and `Probe K` name a probe: behind a mere space only the commonest letters are units.
-    const letterOfName = /^\s+$/.test(tail[2]) && /^[abd-rt-vx-z]$/i.test(tail[3]);
+    const letterOfName = /^\s+$/.test(tail[2]) && /^[abd-rt-vx-z]$/i.test(tail[3]) && !/\sin$/i.test(tail[1]);
     // `Fan time` or `Start date` end in a word that is a name, not a unit.
-    if (found && !letterOfName && !['time', 'date', 'text', 'count'].includes(found.name))
-      return { words: tail[1].trim(), unit: found };
+    if (!letterOfName && !['time', 'date', 'text', 'count'].includes(found.name)) {
+      return { words: tail[1].replace(/\s+in$/i, '').trim(), unit: found };
+    }
   }
   const whole = unitOf(text);
   // A header that is nothing but a unit still names its quantity: `°C`, `rpm`, `Watts`, `seconds`.

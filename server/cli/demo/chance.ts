@@ -1,25 +1,19 @@
-/** A stream of chance that is the same for the same seed on every machine: only whole-number arithmetic and sums. */
+import { seededRandom } from '../../../shared/numerics';
+
+/** A stream of chance that is the same for the same seed on every machine. */
 export interface Chance {
   /** Uniform in [0, 1). */
   uniform(): number;
-  /** Near to normal, mean 0 and standard deviation 1: twelve uniforms summed, exact on every machine. */
+  /**
+   * Near to normal, mean 0 and standard deviation 1: twelve uniforms summed. Unlike a logarithm, sums are the same to the
+   * last bit on every machine, so the demonstration's logs are too.
+   */
   normal(): number;
 }
 
-/** The sfc32 generator (Doty-Humphrey, PractRand; from memory), seeded by one number. */
 export function chanceFrom(seed: number): Chance {
-  let [a, b, c, count] = [seed | 0, 0x9e3779b9 | 0, 0x243f6a88 | 0, 1];
-  const next = (): number => {
-    const sum = (((a + b) | 0) + count) | 0;
-    count = (count + 1) | 0;
-    a = b ^ (b >>> 9);
-    b = (c + (c << 3)) | 0;
-    c = (((c << 21) | (c >>> 11)) + sum) | 0;
-    return sum >>> 0;
-  };
-  // The first numbers still resemble the seed.
-  for (let i = 0; i < 16; i += 1) next();
-  const uniform = (): number => next() / 4294967296;
+  const random = seededRandom(seed);
+  const uniform = (): number => random.uniform();
   return {
     uniform,
     normal: () => {

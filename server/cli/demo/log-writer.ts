@@ -36,9 +36,9 @@ const mean = (values: readonly number[]): number =>
 type Writer = (readings: Readings, start: Moment, decimals: number) => string;
 
 const WRITERS: Record<Writing, Writer> = {
-  /** Comma, seconds since start. */
-  plain: (r, _start, decimals) =>
-    ['time_s,plate_c,ambient_c,watts,fan_rpm']
+  /** Comma, seconds since a start that the first line tells. */
+  plain: (r, start, decimals) =>
+    [`# started ${isoOf(start)}`, 'time_s,plate_c,ambient_c,watts,fan_rpm']
       .concat(
         r.seconds.map((s, i) =>
           [
